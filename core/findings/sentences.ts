@@ -1,0 +1,8 @@
+import { designSentences } from './designSentences';
+import { documentSentences } from './documentSentences';
+import { recordingSentences } from './recordingSentences';
+
+/** The one table that turns a code into its usual severity and its sentence; values stand in braces. */
+export const sentences = { ...recordingSentences, ...documentSentences, ...designSentences } as const;
+
+export type FindingCode = keyof typeof sentences;

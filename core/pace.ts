@@ -1,0 +1,41 @@
+/** Thrown where the user stopped a computation. */
+export class Stopped extends Error {
+  constructor() {
+    super('stopped');
+    this.name = 'Stopped';
+  }
+}
+
+/** Lets long loops be watched and stopped: they await `step` once a block. */
+export interface Pace {
+  /**
+   * Reports progress and, every 30 ms, gives the host a turn.
+   * @param what the stage in words, for example `statistics`
+   * @throws Stopped where the computation was stopped
+   */
+  step(what: string, done: number, total: number): Promise<void>;
+}
+
+const turn = 30;
+
+/**
+ * A pace that yields to the event loop every 30 ms.
+ * @param stopped asked once a step
+ * @param report called with every step
+ */
+export function newPace(
+  stopped: () => boolean = () => false,
+  report: (what: string, done: number, total: number) => void = () => {},
+): Pace {
+  let last = performance.now();
+  return {
+    async step(what, done, total) {
+      report(what, done, total);
+      if (performance.now() - last >= turn) {
+        await new Promise<void>((resolve) => setTimeout(resolve, 0));
+        last = performance.now();
+      }
+      if (stopped()) throw new Stopped();
+    },
+  };
+}

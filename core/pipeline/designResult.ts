@@ -1,0 +1,138 @@
+import type { PairingDocument } from '../document/pairingDocument';
+import type { Finding } from '../findings/finding';
+import type { Levels } from '../recordings/levels';
+
+/** `[from, to)` in whole samples. */
+export interface Interval {
+  from: number;
+  to: number;
+}
+
+/** A recording that the design used. */
+export interface RecordingSummary {
+  file: string;
+  format: string;
+  sha256: string;
+  samples: number;
+  sampleRate: number | null;
+  /** Labels of all channels and, in the same order, their levels over the whole file. */
+  channels: string[];
+  levels: Levels[];
+}
+
+/** A take with everything resolved to samples. */
+export interface TakeSummary {
+  name: string;
+  samples: number;
+  inputs: { file: string; channel: string }[];
+  desired: { file: string; channel: string };
+  fit: Interval[];
+  heldOut: Interval[];
+  disturbanceOnly: Interval[];
+}
+
+/** Error of the filter over a set of samples n. */
+export interface ErrorFigure {
+  /** Number of n used. */
+  samples: number;
+  /** Mean of e², in the desired signal's unit squared. */
+  mse: number;
+  /** `10 log10(Σ e² / Σ d[n-Δ]²)`. */
+  nmseDb: number;
+}
+
+/** Reduction in one band of frequencies, in Hz. */
+export interface BandFigure {
+  from: number;
+  to: number;
+  reductionDb: number;
+}
+
+export interface TakeFigure extends ErrorFigure {
+  name: string;
+  /** Of `nmseDb`, from blocks; null where there are too few blocks. */
+  standardErrorDb: number | null;
+}
+
+export interface HeldOutFigures extends ErrorFigure {
+  /** True where the figures are over the held-out part of `disturbanceOnly` intervals. */
+  disturbanceOnly: boolean;
+  bands: BandFigure[];
+  takes: TakeFigure[];
+}
+
+/** One-sided power spectral densities over the same n as the held-out figures (the fit's where nothing is held out). */
+export interface SpectraFigures {
+  segment: number;
+  averages: number;
+  /** Hz, `segment / 2 + 1` values. */
+  frequencies: Float64Array;
+  /** Of d[n-Δ], of the output y and of the error e, in unit²/Hz. */
+  desired: Float64Array;
+  output: Float64Array;
+  error: Float64Array;
+}
+
+/** The filter in the target's numbers. Amplitudes are in the recording's unit, counts are integers. */
+export interface ArithmeticResult {
+  /** One row an input, newest-first: integers, or floats where `word` is a float type. */
+  values: Float64Array[];
+  /** Null for float words. */
+  fractionBits: number | null;
+  /** Unit of one input count for each input, and of one output count; 1 for float words. */
+  inputCount: number[];
+  outputCount: number;
+  /** fullScale resolved, one for each input; 1 for float words. */
+  inputFullScale: number[];
+  outputFullScale: number;
+  /** `floor(mean/q + ½)` for each input: what the firmware takes off. */
+  inputMeanCounts: number[];
+  /** The desired mean in output counts, for the jobs that add it back to y. */
+  desiredMeanCounts: number;
+  /** Worst case of the accumulator, the rounding term included, and the bits it needs; null for float words. */
+  worstCase: { min: bigint; max: bigint; bits: number } | null;
+  /** Bit-true run over the held-out n (the fit's where nothing is held out); null where it could not be run. */
+  heldOutNmseDb: number | null;
+  quantisationLossDb: number | null;
+  outputErrorDb: number | null;
+  /** Samples at which the accumulator or the output overflowed, of `samples` run. */
+  accumulatorOverflows: number;
+  outputOverflows: number;
+  samples: number;
+}
+
+/** Integer test vectors: history before them zero. */
+export interface TestVectors {
+  /** One row an input: what the filter sees, means taken off; counts, or amplitudes for float words. */
+  input: Float64Array[];
+  expected: Float64Array;
+}
+
+/** Everything a design found; the texts of the files are made from this alone. */
+export interface DesignResult {
+  document: PairingDocument;
+  /** File name of the document, without folder. */
+  documentFile: string;
+  documentSha256: string;
+  /** Hz. */
+  sampleRate: number;
+  recordings: RecordingSummary[];
+  takes: TakeSummary[];
+  /** Labels of the inputs and of the desired signal (those of the first take). */
+  inputs: string[];
+  desired: string;
+  /** One row an input, newest-first. */
+  coefficients: Float64Array[];
+  means: { inputs: number[]; desired: number };
+  /** Mean square of each input over the fit intervals, after mean removal. */
+  inputPowers: number[];
+  method: 'levinson' | 'cholesky';
+  conditionNumber: number;
+  fit: ErrorFigure;
+  heldOut: HeldOutFigures | null;
+  spectra: SpectraFigures;
+  arithmetic: ArithmeticResult;
+  vectors: TestVectors;
+  /** Worst first. */
+  findings: Finding[];
+}

@@ -1,0 +1,35 @@
+import type { Finding } from '../findings/finding';
+
+/** A recording that has been opened: what its header says, and its samples by range. */
+export interface Recording {
+  /** As the document or the command line names it. */
+  readonly file: string;
+  /** In words, for example `WAV, PCM 16 bit` or `text, 3 columns separated by ;`. */
+  readonly format: string;
+  /** True for fixed-point audio (PCM, A-law, µ-law), whose amplitudes are -1..1 of full scale. */
+  readonly pcm: boolean;
+  /** Text whose line ends do not matter for its digest (8-bit text); false for binary and UTF-16 files. */
+  readonly lineEndsIgnored: boolean;
+  /** Samples a second, or null where the file does not say. */
+  readonly sampleRate: number | null;
+  /** Samples of each channel. */
+  readonly samples: number;
+  /** Names of the channels as the file gives them; null where it gives none. A time column is no channel. */
+  readonly channels: readonly (string | null)[];
+  /**
+   * Samples `[from, to)` of the channels asked for (numbers from 0), one new array each, in the file's own unit.
+   * The range must lie inside the recording.
+   */
+  read(channels: readonly number[], from: number, to: number): Promise<Float64Array[]>;
+}
+
+/** What opening a file yields: a recording or, where a finding is a blocker, null. */
+export interface Opened {
+  recording: Recording | null;
+  findings: Finding[];
+}
+
+/** The name a channel is shown and found by: its own, or its number from 1. */
+export function channelLabel(recording: Recording, channel: number): string {
+  return recording.channels[channel] ?? String(channel + 1);
+}
