@@ -1,12 +1,13 @@
 import type { PairingDocument } from '../document/pairingDocument';
+import type { BandFigure } from '../evaluation/bandFigures';
+import type { ErrorFigure } from '../evaluation/fitFigure';
+import type { SpectraFigures, TakeFigure } from '../evaluation/heldOutFigures';
 import type { Finding } from '../findings/finding';
+import type { TestVectors } from '../numbers/testVectors';
+import type { Interval } from '../pair/intervals';
 import type { Levels } from '../recordings/levels';
 
-/** `[from, to)` in whole samples. */
-export interface Interval {
-  from: number;
-  to: number;
-}
+export type { BandFigure, ErrorFigure, Interval, SpectraFigures, TakeFigure, TestVectors };
 
 /** A recording that the design used. */
 export interface RecordingSummary {
@@ -31,46 +32,11 @@ export interface TakeSummary {
   disturbanceOnly: Interval[];
 }
 
-/** Error of the filter over a set of samples n. */
-export interface ErrorFigure {
-  /** Number of n used. */
-  samples: number;
-  /** Mean of e², in the desired signal's unit squared. */
-  mse: number;
-  /** `10 log10(Σ e² / Σ d[n-Δ]²)`. */
-  nmseDb: number;
-}
-
-/** Reduction in one band of frequencies, in Hz. */
-export interface BandFigure {
-  from: number;
-  to: number;
-  reductionDb: number;
-}
-
-export interface TakeFigure extends ErrorFigure {
-  name: string;
-  /** Of `nmseDb`, from blocks; null where there are too few blocks. */
-  standardErrorDb: number | null;
-}
-
 export interface HeldOutFigures extends ErrorFigure {
   /** True where the figures are over the held-out part of `disturbanceOnly` intervals. */
   disturbanceOnly: boolean;
   bands: BandFigure[];
   takes: TakeFigure[];
-}
-
-/** One-sided power spectral densities over the same n as the held-out figures (the fit's where nothing is held out). */
-export interface SpectraFigures {
-  segment: number;
-  averages: number;
-  /** Hz, `segment / 2 + 1` values. */
-  frequencies: Float64Array;
-  /** Of d[n-Δ], of the output y and of the error e, in unit²/Hz. */
-  desired: Float64Array;
-  output: Float64Array;
-  error: Float64Array;
 }
 
 /** The filter in the target's numbers. Amplitudes are in the recording's unit, counts are integers. */
@@ -99,13 +65,6 @@ export interface ArithmeticResult {
   accumulatorOverflows: number;
   outputOverflows: number;
   samples: number;
-}
-
-/** Integer test vectors: history before them zero. */
-export interface TestVectors {
-  /** One row an input: what the filter sees, means taken off; counts, or amplitudes for float words. */
-  input: Float64Array[];
-  expected: Float64Array;
 }
 
 /** Everything a design found; the texts of the files are made from this alone. */

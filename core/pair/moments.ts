@@ -1,0 +1,71 @@
+import type { Pace } from '../pace';
+import type { Means } from './signals';
+import { signalReader } from './signals';
+import type { Take } from './take';
+
+/** Means and powers of the signals over the fit intervals of all takes together. */
+export interface Moments {
+  means: Means;
+  /** Mean square of each input after mean removal (of the raw input where means are kept). */
+  inputPowers: number[];
+  /** Of the desired signal, likewise. */
+  desiredPower: number;
+}
+
+const block = 65536;
+
+/** Count, mean and sum of squares about the mean: two of them are merged by Chan, Golub & LeVeque's rule (1979). */
+class Tally {
+  count = 0;
+  mean = 0;
+  squares = 0;
+
+  add(samples: Float64Array): void {
+    let sum = 0;
+    for (let k = 0; k < samples.length; k++) sum += samples[k];
+    const mean = sum / samples.length;
+    let squares = 0;
+    for (let k = 0; k < samples.length; k++) squares += (samples[k] - mean) * (samples[k] - mean);
+    const total = this.count + samples.length;
+    const gap = mean - this.mean;
+    this.squares += squares + (gap * gap * this.count * samples.length) / total;
+    this.mean += (gap * samples.length) / total;
+    this.count = total;
+  }
+}
+
+/**
+ * One pass over the fit intervals.
+ * @param removeMean whether the means are to be taken off; if not, they are given as 0
+ */
+export async function measureMoments(
+  takes: readonly Take[],
+  removeMean: boolean,
+  pace: Pace,
+): Promise<Moments> {
+  const inputs = takes[0].inputs.map(() => new Tally());
+  const desired = new Tally();
+  for (const take of takes) {
+    const none = { inputs: take.inputs.map(() => 0), desired: 0 };
+    const read = signalReader(take, { means: none, delay: 0 });
+    for (const { from, to } of take.fit) {
+      for (let start = from; start < to; start += block) {
+        const signals = await read(start, Math.min(to, start + block));
+        signals.inputs.forEach((samples, r) => {
+          inputs[r].add(samples);
+        });
+        desired.add(signals.desired);
+        await pace.step('levels', start - from, to - from);
+      }
+    }
+  }
+  const power = (tally: Tally) => tally.squares / tally.count + (removeMean ? 0 : tally.mean * tally.mean);
+  return {
+    means: {
+      inputs: inputs.map((tally) => (removeMean ? tally.mean : 0)),
+      desired: removeMean ? desired.mean : 0,
+    },
+    inputPowers: inputs.map(power),
+    desiredPower: power(desired),
+  };
+}

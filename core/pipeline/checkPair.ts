@@ -1,0 +1,59 @@
+import { type Finding, finding } from '../findings/finding';
+import { totalLength } from '../pair/intervals';
+import type { Moments } from '../pair/moments';
+import type { Take, Track } from '../pair/take';
+import { usedSegments } from '../pair/usedSegments';
+import { channelLabel } from '../recordings/recording';
+import type { Pairing } from './pairing';
+
+/** Unknowns above which the dense normal matrix would not fit in memory. */
+const mostUnknowns = 8192;
+
+/** Blockers that can be told before anything is computed. */
+export function checkPair({ document, takes, recordings }: Pairing): Finding[] {
+  const { length, delay } = document.filter;
+  const findings: Finding[] = [];
+  if (document.prepare.band !== null) {
+    findings.push(finding('band-unsupported', {}, { path: ['prepare', 'band'] }));
+  }
+  const unknowns = length * takes[0].inputs.length;
+  if (unknowns > mostUnknowns) {
+    findings.push(
+      finding('too-many-taps', { unknowns, limit: mostUnknowns }, { path: ['filter', 'length'] }),
+    );
+  }
+  const samples = takes.reduce(
+    (sum, take) => sum + totalLength(usedSegments(take, take.fit, length, delay)),
+    0,
+  );
+  if (samples < unknowns) {
+    findings.push(finding('too-few-samples', { samples, unknowns }, { path: ['filter', 'length'] }));
+  }
+  const digest = (track: Track) => recordings.get(track.recording.file)?.sha256;
+  takes.forEach((take, t) => {
+    const same = take.inputs.some(
+      (input) => digest(input) === digest(take.desired) && input.channel === take.desired.channel,
+    );
+    if (same && delay >= 0 && delay < length) {
+      findings.push(
+        finding('trivial', { delay, last: length - 1 }, { take: take.name, path: ['takes', t, 'desired'] }),
+      );
+    }
+  });
+  return findings;
+}
+
+/** Signals that are constant over the fit intervals. */
+export function checkSilence(takes: readonly Take[], moments: Moments): Finding[] {
+  const findings: Finding[] = [];
+  const check = (track: Track, power: number) => {
+    if (power > 0) return;
+    const place = { file: track.recording.file, channel: channelLabel(track.recording, track.channel) };
+    findings.push(finding('silent', {}, place));
+  };
+  takes[0].inputs.forEach((track, r) => {
+    check(track, moments.inputPowers[r]);
+  });
+  check(takes[0].desired, moments.desiredPower);
+  return findings;
+}

@@ -1,0 +1,142 @@
+import { bandFigures } from '../evaluation/bandFigures';
+import { fitFigure } from '../evaluation/fitFigure';
+import { evaluate } from '../evaluation/heldOutFigures';
+import { checkLimits } from '../evaluation/limits';
+import { heldOutRuns, type MeasuredRuns, runsOver } from '../evaluation/measuredRuns';
+import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
+import { overflowFindings } from '../numbers/overflowFindings';
+import { type TargetFilter, targetInput } from '../numbers/targetFilter';
+import { type TestVectors, testVectors } from '../numbers/testVectors';
+import { signalReader } from '../pair/signals';
+import { arithmeticResult } from './arithmeticResult';
+import type { DesignResult } from './designResult';
+import { type Fit, fitPair } from './fitPair';
+import type { Host } from './host';
+import { type DocumentPlace, type Pairing, readPairing } from './pairing';
+import { recordingSummaries, takeSummaries } from './summaries';
+import { toTarget } from './toTarget';
+
+/** A design, or the findings that stopped it (and those found on the way), worst first. */
+export interface Designed {
+  result: DesignResult | null;
+  findings: Finding[];
+}
+
+/** Condition number from which the taps are called ill-conditioned: they keep about six digits (common practice). */
+const illConditioned = 1e10;
+
+/**
+ * The whole job on one document: read, pair, statistics, solution, evaluation, number format.
+ * Bad input never throws: it comes back as findings, with `result` null where one of them is a blocker.
+ */
+export async function design(host: Host, text: string, place: DocumentPlace): Promise<Designed> {
+  const findings: Finding[] = [];
+  try {
+    const read = await readPairing(host, text, place);
+    findings.push(...read.findings);
+    if (read.pairing === null) return { result: null, findings: worstFirst(findings) };
+    const fit = await fitPair(read.pairing, host.pace);
+    const target = toTarget(read.pairing, fit);
+    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings);
+    return { result, findings: result.findings };
+  } catch (error) {
+    if (!(error instanceof Refusal)) throw error;
+    return { result: null, findings: worstFirst([...findings, ...error.findings]) };
+  }
+}
+
+/** Figures of a solution and its target numbers, as everything that is written needs them. */
+export async function evaluateDesign(
+  host: Host,
+  pairing: Pairing,
+  place: DocumentPlace,
+  fit: Fit,
+  target: TargetFilter,
+  earlier: readonly Finding[],
+): Promise<DesignResult> {
+  const { document, takes, sampleRate } = pairing;
+  const { filter } = fit;
+  const fitted = await fitFigure(takes, document.filter.windowing, filter, host.pace);
+  const heldOut = heldOutRuns(takes, document.job, filter);
+  const proved = heldOut.runs.length > 0;
+  const runs = proved ? heldOut.runs : runsOver(takes, (take) => take.fit, filter);
+  const evaluation = await evaluate(runs, filter, target, sampleRate, host.pace);
+  const trustworthy = document.job !== 'cancel' || heldOut.disturbanceOnly;
+  const findings = [
+    ...earlier,
+    ...proofFindings(pairing, fit, heldOut),
+    ...overflowFindings(target, evaluation.target),
+    ...checkLimits(document.limits, {
+      takes: proved ? evaluation.takes : null,
+      target: proved ? evaluation.target : null,
+      trustworthy,
+    }),
+  ];
+  return {
+    document,
+    documentFile: place.file,
+    documentSha256: pairing.documentSha256,
+    sampleRate,
+    recordings: recordingSummaries(pairing),
+    takes: takeSummaries(takes),
+    inputs: takeSummaries(takes)[0].inputs.map(({ channel }) => channel),
+    desired: takeSummaries(takes)[0].desired.channel,
+    coefficients: [...filter.coefficients],
+    means: filter.means,
+    inputPowers: fit.moments.inputPowers,
+    method: fit.solution.method,
+    conditionNumber: fit.solution.conditionNumber,
+    fit: fitted,
+    heldOut: proved
+      ? {
+          ...evaluation.total,
+          disturbanceOnly: heldOut.disturbanceOnly,
+          bands: bandFigures(evaluation.spectra),
+          takes: evaluation.takes,
+        }
+      : null,
+    spectra: evaluation.spectra,
+    arithmetic: arithmeticResult(target, evaluation.target),
+    vectors: await vectorsFrom(runs, pairing, fit, target),
+    findings: worstFirst(findings),
+  };
+}
+
+function proofFindings({ document, takes }: Pairing, { solution }: Fit, heldOut: MeasuredRuns): Finding[] {
+  const findings: Finding[] = [];
+  if (heldOut.runs.length === 0) findings.push(finding('no-held-out', {}, { path: ['takes', 0] }));
+  else if (document.job === 'cancel' && !heldOut.disturbanceOnly) {
+    findings.push(finding('no-disturbance-only', {}, { path: ['takes', 0] }));
+  }
+  for (const name of heldOut.leftOut) {
+    const t = takes.findIndex((take) => take.name === name);
+    findings.push(finding('no-disturbance-only', {}, { take: name, path: ['takes', t] }));
+  }
+  if (solution.conditionNumber > illConditioned) {
+    findings.push(
+      finding(
+        'ill-conditioned',
+        { condition: Number(solution.conditionNumber.toPrecision(2)) },
+        { path: ['filter', 'regularisation'] },
+      ),
+    );
+  }
+  return findings;
+}
+
+async function vectorsFrom(
+  runs: MeasuredRuns['runs'],
+  { document }: Pairing,
+  { filter }: Fit,
+  target: TargetFilter,
+): Promise<TestVectors> {
+  const { take, segments } = runs[0];
+  const none = { inputs: take.inputs.map(() => 0), desired: 0 };
+  const read = signalReader(take, { means: none, delay: filter.delay });
+  const { from, to } = segments[0];
+  const raw = await read(from, Math.min(to, from + document.write.testVectors));
+  return testVectors(
+    target,
+    raw.inputs.map((samples, r) => targetInput(target, r, samples)),
+  );
+}

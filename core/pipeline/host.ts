@@ -1,0 +1,14 @@
+import type { ByteSource } from '../bytes/byteSource';
+import type { NewSha256 } from '../bytes/sha256';
+import type { Pace } from '../pace';
+
+/** Why a file could not be opened. */
+export type OpenFailure = 'missing' | 'outside' | 'not-a-file' | 'unreadable';
+
+/** What the core needs of the place it runs in. */
+export interface Host {
+  /** Opens a file by its path from the root, with forward slashes. */
+  open(path: string): Promise<ByteSource | OpenFailure>;
+  newSha256: NewSha256;
+  pace: Pace;
+}

@@ -1,0 +1,55 @@
+import { sha256OfText } from '../bytes/sha256';
+import { documentMeaning } from '../document/canonicalJson';
+import type { PairingDocument } from '../document/pairingDocument';
+import { readDocument } from '../document/readDocument';
+import { blocked, type Finding } from '../findings/finding';
+import { resolveTakes } from '../pair/resolveTakes';
+import type { Take } from '../pair/take';
+import type { Host } from './host';
+import { type OpenedRecording, openRecordings } from './openRecordings';
+
+/** A pairing document that has been read, with its recordings opened and its takes resolved. */
+export interface Pairing {
+  document: PairingDocument;
+  /** Of the document's meaning. */
+  documentSha256: string;
+  /** By the name the document uses. */
+  recordings: Map<string, OpenedRecording>;
+  takes: Take[];
+  /** Hz. */
+  sampleRate: number;
+}
+
+/** Where a document is. */
+export interface DocumentPlace {
+  /** File name without folder. */
+  file: string;
+  /** Folder from the root, with forward slashes; '' for the root itself. */
+  folder: string;
+}
+
+export interface ReadPairing {
+  /** Null where a blocker was found. */
+  pairing: Pairing | null;
+  /** The document as far as it is valid by itself. */
+  document: PairingDocument | null;
+  findings: Finding[];
+}
+
+/** Reads, opens and resolves what a document names. */
+export async function readPairing(host: Host, text: string, place: DocumentPlace): Promise<ReadPairing> {
+  const { document, findings } = readDocument(text);
+  if (document === null || blocked(findings)) return { pairing: null, document, findings };
+  const opened = await openRecordings(host, place.folder, document);
+  const recordings = new Map([...opened.byFile].map(([file, { recording }]) => [file, recording]));
+  const resolved = resolveTakes(document, recordings);
+  const all = [...findings, ...opened.findings, ...resolved.findings];
+  if (blocked(all)) return { pairing: null, document, findings: all };
+  const documentSha256 = sha256OfText(host.newSha256, documentMeaning(document));
+  const { takes, sampleRate } = resolved;
+  return {
+    pairing: { document, documentSha256, recordings: opened.byFile, takes, sampleRate },
+    document,
+    findings: all,
+  };
+}

@@ -1,0 +1,62 @@
+import { normalMatrix } from '../statistics/normalMatrix';
+import type { NormalSums } from '../statistics/normalSums';
+
+/**
+ * The normal equations made free of units: with `D = diag(√P_r)`,
+ * `D⁻¹ (Φ/L) D⁻¹ (D w) = D⁻¹ θ/L`; regularisation adds ρ to the diagonal.
+ */
+export interface NormalSystem {
+  size: number;
+  /** Right-hand side `D⁻¹ θ/L`. */
+  right: Float64Array;
+  /** √P_r for every unknown: `w = solution / scale`. */
+  scale: Float64Array;
+  /** `D⁻¹ (Φ/L) D⁻¹`: its first column where it is Toeplitz, otherwise row-major with the lower triangle filled. */
+  matrix: { toeplitz: Float64Array } | { dense: Float64Array };
+}
+
+/**
+ * @param powers P_r of each input, all above 0
+ */
+export function normalSystem(sums: NormalSums, powers: readonly number[]): NormalSystem {
+  const { inputs, length, count } = sums;
+  const size = inputs * length;
+  const scale = new Float64Array(size);
+  const right = new Float64Array(size);
+  for (let r = 0; r < inputs; r++) {
+    const root = Math.sqrt(powers[r]);
+    for (let k = 0; k < length; k++) {
+      scale[r * length + k] = root;
+      right[r * length + k] = sums.cross[r][k] / count / root;
+    }
+  }
+  if (inputs === 1 && sums.edges.length === 0) {
+    const toeplitz = sums.correlations[0][0].map((value) => value / count / powers[0]);
+    return { size, right, scale, matrix: { toeplitz } };
+  }
+  const dense = normalMatrix(sums);
+  for (let i = 0; i < size; i++) {
+    for (let j = 0; j <= i; j++) dense[i * size + j] /= count * scale[i] * scale[j];
+  }
+  return { size, right, scale, matrix: { dense } };
+}
+
+/** `(A + ρ I) v` with the matrix of the system. */
+export function multiply(system: NormalSystem, regularisation: number, v: Float64Array): Float64Array {
+  const { size, matrix } = system;
+  const product = new Float64Array(size);
+  const element =
+    'toeplitz' in matrix
+      ? (i: number, j: number) => matrix.toeplitz[i - j]
+      : (i: number, j: number) => matrix.dense[i * size + j];
+  for (let i = 0; i < size; i++) {
+    let sum = (element(i, i) + regularisation) * v[i];
+    for (let j = 0; j < i; j++) {
+      const a = element(i, j);
+      sum += a * v[j];
+      product[j] += a * v[i];
+    }
+    product[i] += sum;
+  }
+  return product;
+}

@@ -1,0 +1,97 @@
+import type { Pace } from '../pace';
+import type { Interval } from '../pair/intervals';
+import type { SignalReader } from '../pair/signals';
+import { type BlockSpectra, blockFor, newBlockSpectra, newSpectrum, type Spectrum } from './blockSpectra';
+import { emptySums, type NormalSums } from './normalSums';
+
+/**
+ * The sums over the n of one stretch, gathered block by block: for each pair of signals the spectra
+ * `Z conj(X)` of current block and joined input are added up and transformed back once at the end.
+ * `count` is left to the caller, since the two windowings count differently.
+ * @param read gives the samples before the stretch as they are to count: the true ones or zeros
+ * @param inputs K
+ * @param length M
+ * @param edges whether the samples at the ends are kept for shift updates
+ */
+export async function sumStretch(
+  read: SignalReader,
+  stretch: Interval,
+  inputs: number,
+  length: number,
+  edges: boolean,
+  pace: Pace,
+): Promise<NormalSums> {
+  const sums = emptySums(inputs, length);
+  const spectra = newBlockSpectra(inputs + 1, blockFor(length));
+  const products = newProducts(inputs, spectra);
+  const scratch = newSpectrum(spectra.transform.size);
+  const history = await read(stretch.from, stretch.from, length - 1);
+  spectra.push(history.inputs.map((samples) => atEnd(samples, spectra.block)));
+
+  for (let from = stretch.from; from < stretch.to; from += spectra.block) {
+    const to = Math.min(stretch.to, from + spectra.block);
+    const { inputs: x, desired } = await read(from, to);
+    spectra.push([...x, desired]);
+    addProducts(products, spectra, scratch);
+    for (let k = 0; k < desired.length; k++) sums.desiredEnergy += desired[k] * desired[k];
+    await pace.step('statistics', to - stretch.from, stretch.to - stretch.from);
+  }
+  finishProducts(products, spectra, sums);
+
+  if (edges && length > 1) {
+    const last = await read(stretch.to, stretch.to, length - 1);
+    sums.edges.push({ before: history.inputs.map(reversed), after: last.inputs.map(reversed) });
+  }
+  return sums;
+}
+
+/** `[r][t]`: accumulated Z_t conj(X_r). */
+type Products = Spectrum[][];
+
+function newProducts(inputs: number, spectra: BlockSpectra): Products {
+  return Array.from({ length: inputs }, () => spectra.packed.map(() => newSpectrum(spectra.transform.size)));
+}
+
+function addProducts(products: Products, spectra: BlockSpectra, x: Spectrum): void {
+  const size = spectra.transform.size;
+  for (let r = 0; r < products.length; r++) {
+    // The current block starts at sample `block` of the joined one: its own spectrum takes the odd signs.
+    spectra.joined(r, x);
+    for (let t = 0; t < spectra.packed.length; t++) {
+      const z = spectra.packed[t];
+      const sum = products[r][t];
+      for (let p = 0; p < size; p++) {
+        const sign = p < size / 2 ? 1 : -1;
+        sum.re[p] += sign * (z.re[p] * x.re[p] + z.im[p] * x.im[p]);
+        sum.im[p] += sign * (z.im[p] * x.re[p] - z.re[p] * x.im[p]);
+      }
+    }
+  }
+}
+
+function finishProducts(products: Products, spectra: BlockSpectra, sums: NormalSums): void {
+  const { length, inputs } = sums;
+  for (let r = 0; r < inputs; r++) {
+    for (let t = 0; t < spectra.packed.length; t++) {
+      const { re, im } = products[r][t];
+      spectra.transform.inverse(re, im);
+      for (const [signal, part] of [
+        [2 * t, re],
+        [2 * t + 1, im],
+      ] as const) {
+        if (signal < inputs) sums.correlations[r][signal].set(part.subarray(0, length));
+        else if (signal === inputs) sums.cross[r].set(part.subarray(0, length));
+      }
+    }
+  }
+}
+
+function atEnd(samples: Float64Array, block: number): Float64Array {
+  const whole = new Float64Array(block);
+  whole.set(samples, block - samples.length);
+  return whole;
+}
+
+function reversed(samples: Float64Array): Float64Array {
+  return samples.slice().reverse();
+}
