@@ -50,4 +50,16 @@ export const pairSentences = table({
     severity: 'blocker',
     says: 'no sample is left to fit the filter on; expected at least one fit interval.',
   },
+  'missing-document': {
+    severity: 'blocker',
+    says: 'no such file; expected a pairing document.',
+  },
+  'document-too-large': {
+    severity: 'blocker',
+    says: 'got {size} bytes when expected a pairing document of at most {limit}.',
+  },
+  'document-exists': {
+    severity: 'blocker',
+    says: 'the document is there already and is left as it is. Name another with -o.',
+  },
 });

@@ -1,6 +1,7 @@
 import type { IntervalEntry, PairingDocument, TakeEntry, TrackEntry } from '../document/pairingDocument';
 import { type Finding, finding } from '../findings/finding';
-import { channelLabel, type Recording } from '../recordings/recording';
+import { channelMissing, findChannel } from '../recordings/findChannel';
+import type { Recording } from '../recordings/recording';
 import { complement, firstOverlap, type Interval } from './intervals';
 import { inputSamples, type Take, type Track } from './take';
 
@@ -112,17 +113,9 @@ function resolveTrack(
 ): Track | null {
   const recording = recordings.get(file);
   if (recording === undefined) return null;
-  const number =
-    typeof channel === 'number' ? channel - 1 : recording.channels.indexOf(channel);
-  if (number >= 0 && number < recording.channels.length) return { recording, channel: number };
-  const known = recording.channels.map((_, c) => channelLabel(recording, c)).slice(0, 12);
-  findings.push(
-    finding(
-      'channel-missing',
-      { channel: String(channel), count: recording.channels.length, known: known.join(', ') },
-      { file, path: [...path, 'channel'] },
-    ),
-  );
+  const number = findChannel(recording, channel);
+  if (number !== null) return { recording, channel: number };
+  findings.push(channelMissing(recording, channel, { path: [...path, 'channel'] }));
   return null;
 }
 

@@ -1,15 +1,13 @@
-import type { SignalWord } from '../document/pairingDocument';
 import { finding, Refusal } from '../findings/finding';
 import { roundErrorAware } from '../numbers/errorAwareRounding';
 import { fits, fittingFractionBits, roundToNearest } from '../numbers/fractionBits';
-import { defaultFullScale, type SignalExtent } from '../numbers/fullScale';
-import { floatScaling, integerScaling, isFloat, type Scaling, scaledCoefficients } from '../numbers/scaling';
+import { isFloat, type Scaling, scaledCoefficients } from '../numbers/scaling';
 import type { TargetFilter } from '../numbers/targetFilter';
 import { powerOfTwo, wordRange } from '../numbers/words';
-import type { Track } from '../pair/take';
 import { factorCholesky } from '../solvers/cholesky';
 import type { Fit } from './fitPair';
 import type { Pairing } from './pairing';
+import { targetFormat, targetScaling } from './targetFormat';
 
 /** Unknowns above which error-aware rounding is left for plain rounding: its cost grows with their square. */
 const mostForErrorAware = 4096;
@@ -25,19 +23,11 @@ export function toTarget(pairing: Pairing, fit: Fit): TargetFilter {
     const round = arithmetic.word === 'float32' ? Math.fround : (value: number) => value;
     return {
       values: coefficients.map((row) => row.map(round)),
-      scaling: floatScaling(arithmetic.word, means),
+      scaling: targetScaling(pairing, means),
       format: arithmetic.word,
     };
   }
-  const inputWord = bitsOf(arithmetic.input);
-  const outputWord = bitsOf(arithmetic.output);
-  const scaling = integerScaling(
-    fullScales(pairing, inputWord),
-    outputFullScale(pairing, outputWord),
-    inputWord,
-    outputWord,
-    means,
-  );
+  const scaling = targetScaling(pairing, means);
   const scaled = scaledCoefficients(coefficients, scaling);
   const fractionBits = chooseFractionBits(pairing, scaled, arithmetic.word);
   const aware = arithmetic.rounding === 'error-aware' && fit.system.size <= mostForErrorAware;
@@ -53,49 +43,8 @@ export function toTarget(pairing: Pairing, fit: Fit): TargetFilter {
         )
       : roundToNearest(scaled, fractionBits),
     scaling,
-    format: {
-      word: arithmetic.word,
-      fractionBits,
-      inputWord,
-      outputWord,
-      accumulator: arithmetic.accumulator,
-      accumulatorOverflow: arithmetic.accumulatorOverflow,
-      overflow: arithmetic.overflow,
-    },
+    format: targetFormat(arithmetic, fractionBits),
   };
-}
-
-function bitsOf({ word }: SignalWord): number {
-  if (isFloat(word)) throw new Error('the document reader lets no float signal pass beside integer taps');
-  return word;
-}
-
-function fullScales({ document, takes, recordings }: Pairing, bits: number): number[] {
-  const given = document.arithmetic.input.fullScale;
-  return takes[0].inputs.map((_, r) => {
-    if (given !== null) return given.length === 1 ? given[0] : given[r];
-    return defaultFullScale(
-      takes.map((take) => extent(recordings, take.inputs[r])),
-      bits,
-    );
-  });
-}
-
-function outputFullScale({ document, takes, recordings }: Pairing, bits: number): number {
-  const given = document.arithmetic.output.fullScale;
-  return (
-    given?.[0] ??
-    defaultFullScale(
-      takes.map((take) => extent(recordings, take.desired)),
-      bits,
-    )
-  );
-}
-
-function extent(recordings: Pairing['recordings'], { recording, channel }: Track): SignalExtent {
-  const opened = recordings.get(recording.file);
-  if (opened === undefined) throw new Error(`recording ${recording.file} was resolved without being opened`);
-  return { pcm: recording.pcm, levels: opened.levels[channel] };
 }
 
 function chooseFractionBits(pairing: Pairing, scaled: readonly Float64Array[], word: number): number {

@@ -123,7 +123,9 @@ function reference(c: Case): Float64Array {
       right.push(0);
     }
   }
-  return Float64Array.from(new QrDecomposition(new Matrix(rows)).solve(Matrix.columnVector(right)).to1DArray());
+  return Float64Array.from(
+    new QrDecomposition(new Matrix(rows)).solve(Matrix.columnVector(right)).to1DArray(),
+  );
 }
 
 describe('taps against dense least squares', () => {

@@ -1,0 +1,172 @@
+import { digestSource } from '../bytes/digest';
+import { resolveInside } from '../document/paths';
+import { readTaps, type TapsFile } from '../files/readTaps';
+import { selfDigestHolds } from '../files/selfDigest';
+import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
+import type { TargetFilter } from '../numbers/targetFilter';
+import { evaluateDesign } from './design';
+import type { DesignResult } from './designResult';
+import { type Fit, fitPair } from './fitPair';
+import type { Host } from './host';
+import { type DocumentPlace, type Pairing, readPairing } from './pairing';
+import { targetFormat, targetScaling } from './targetFormat';
+
+/** What a check came to. */
+export interface Checked {
+  /** `bad-input`: nothing could be told; `failed`: stale, edited, different or over a limit. */
+  state: 'current' | 'failed' | 'bad-input';
+  /** The result found again; null where it was not computed. */
+  result: DesignResult | null;
+  findings: Finding[];
+}
+
+/**
+ * Whether what was written still holds: digests of document, recordings and files, then the solution again, and the
+ * written integers run again (not rounded again) for the limits. Writes nothing.
+ */
+export async function check(host: Host, text: string, place: DocumentPlace): Promise<Checked> {
+  const findings: Finding[] = [];
+  try {
+    const read = await readPairing(host, text, place);
+    findings.push(...read.findings);
+    if (read.pairing === null) return { state: 'bad-input', result: null, findings: worstFirst(findings) };
+    const written = await readWritten(host, read.pairing, place);
+    const stale =
+      written.taps === null
+        ? written.findings
+        : [...written.findings, ...staleness(read.pairing, written.taps, written.file)];
+    if (written.taps === null || stale.length > 0) {
+      return { state: 'failed', result: null, findings: worstFirst([...findings, ...stale]) };
+    }
+    const fit = await fitPair(read.pairing, host.pace);
+    const different = compareTaps(fit, written.taps, written.file);
+    const target = writtenTarget(read.pairing, fit, written.taps);
+    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings);
+    different.push(...compareFigures(result, written.taps, written.file));
+    const failed = different.length > 0 || result.findings.some((f) => f.code === 'over-limit');
+    return {
+      state: failed ? 'failed' : 'current',
+      result,
+      findings: worstFirst([...different, ...result.findings]),
+    };
+  } catch (error) {
+    if (!(error instanceof Refusal)) throw error;
+    return { state: 'bad-input', result: null, findings: worstFirst([...findings, ...error.findings]) };
+  }
+}
+
+interface WrittenFiles {
+  /** Path of the taps file from the document's folder. */
+  file: string;
+  taps: TapsFile | null;
+  findings: Finding[];
+}
+
+/** Reads the taps file and holds the digests it lists against the files beside it. */
+async function readWritten(host: Host, { document }: Pairing, place: DocumentPlace): Promise<WrittenFiles> {
+  const name = `${place.file.replace(/\.pairing\.json$/, '')}.taps.json`;
+  const within = (path: string) => (document.write.folder === '' ? path : `${document.write.folder}/${path}`);
+  const file = within(name);
+  const text = await readText(host, place.folder, file);
+  if (text === null) return { file, taps: null, findings: [finding('not-written', { file }, { path: [] })] };
+  const taps = readTaps(text, file);
+  const findings: Finding[] = [];
+  if (!selfDigestHolds(text, host.newSha256)) findings.push(finding('edited', {}, { file }));
+  for (const [path, sha256] of Object.entries(taps.files)) {
+    const digest = await digestOf(host, place.folder, within(path));
+    if (digest === null) findings.push(finding('missing-output', {}, { file: within(path) }));
+    else if (digest !== sha256) findings.push(finding('edited', {}, { file: within(path) }));
+  }
+  return { file, taps, findings };
+}
+
+function staleness(pairing: Pairing, taps: TapsFile, tapsFile: string): Finding[] {
+  const findings: Finding[] = [];
+  if (taps.document.sha256 !== pairing.documentSha256) {
+    findings.push(finding('stale-document', {}, { file: tapsFile }));
+  }
+  const known = new Map(taps.recordings.map(({ file, sha256 }) => [file, sha256]));
+  for (const [file, { sha256 }] of pairing.recordings) {
+    if (known.has(file) && known.get(file) !== sha256)
+      findings.push(finding('stale-recording', {}, { file }));
+  }
+  return findings;
+}
+
+async function readText(host: Host, folder: string, file: string): Promise<string | null> {
+  const source = await openInside(host, folder, file);
+  if (source === null) return null;
+  return new TextDecoder().decode(await source.read(0, source.size));
+}
+
+async function digestOf(host: Host, folder: string, file: string): Promise<string | null> {
+  const source = await openInside(host, folder, file);
+  if (source === null) return null;
+  // Version control may have changed the line ends of texts; the NPY file has none to change.
+  return digestSource(source, host.newSha256, !file.endsWith('.npy'), host.pace);
+}
+
+async function openInside(host: Host, folder: string, file: string) {
+  const path = resolveInside(folder, file);
+  const source = path === null ? 'outside' : await host.open(path);
+  if (source === 'missing') return null;
+  if (typeof source === 'string') throw new Refusal([finding('unreadable-file', {}, { file })]);
+  return source;
+}
+
+/** Taps must agree within what the solver keeps: about 1e-14 times the condition number. */
+function compareTaps({ filter, solution }: Fit, taps: TapsFile, file: string): Finding[] {
+  let gap = 0;
+  let size = 0;
+  const sameShape =
+    taps.coefficients.length === filter.coefficients.length &&
+    taps.coefficients[0].length === filter.coefficients[0].length;
+  if (sameShape) {
+    filter.coefficients.forEach((row, r) => {
+      row.forEach((w, k) => {
+        gap += (w - taps.coefficients[r][k]) * (w - taps.coefficients[r][k]);
+        size += w * w;
+      });
+    });
+  }
+  const relative = Math.sqrt(gap / size);
+  const allowed = Math.max(1e-12, 1e-14 * solution.conditionNumber);
+  if (sameShape && (relative <= allowed || gap === 0)) return [];
+  const got = sameShape
+    ? `a relative difference of ${Number(relative.toPrecision(2))}`
+    : 'another number of taps';
+  return [
+    finding(
+      'different',
+      { what: 'the taps', got, expected: `at most ${Number(allowed.toPrecision(2))}` },
+      { file },
+    ),
+  ];
+}
+
+function writtenTarget(pairing: Pairing, fit: Fit, taps: TapsFile): TargetFilter {
+  const { word, fractionBits, values } = taps.arithmetic;
+  return {
+    values,
+    scaling: targetScaling(pairing, fit.filter.means),
+    format: typeof word === 'string' ? word : targetFormat(pairing.document.arithmetic, fractionBits ?? 0),
+  };
+}
+
+/** Shown figures must agree to their last shown digit, give or take one. */
+function compareFigures(result: DesignResult, taps: TapsFile, file: string): Finding[] {
+  const findings: Finding[] = [];
+  const compare = (what: string, got: number | null, expected: number | null) => {
+    if (got === null || expected === null || Math.abs(got - expected) <= 0.0151) return;
+    findings.push(
+      finding('different', { what, got: `${got.toFixed(2)} dB`, expected: `${expected} dB` }, { file }),
+    );
+  };
+  compare('the held-out NMSE', result.heldOut?.nmseDb ?? null, taps.heldOutNmseDb);
+  compare(
+    'the held-out NMSE of the written integers',
+    result.arithmetic.heldOutNmseDb,
+    taps.arithmetic.heldOutNmseDb,
+  );
+  return findings;
+}

@@ -1,0 +1,33 @@
+import { type Finding, finding, type Place } from '../findings/finding';
+import { channelLabel, type Recording } from './recording';
+
+/** Most channels that a finding names. */
+const named = 12;
+
+/**
+ * Number from 0 of a channel that a document names: by its name in the file (the first of that name) or by its number
+ * from 1; null where the recording has none such.
+ */
+export function findChannel(recording: Recording, channel: string | number): number | null {
+  const number = typeof channel === 'number' ? channel - 1 : recording.channels.indexOf(channel);
+  return number >= 0 && number < recording.channels.length ? number : null;
+}
+
+/** The same for a text of the command line, where digits may be a name or a number. */
+export function findChannelByText(recording: Recording, text: string): number | null {
+  return (
+    findChannel(recording, text) ?? (/^[1-9]\d*$/.test(text) ? findChannel(recording, Number(text)) : null)
+  );
+}
+
+/** The finding that a recording has no such channel, with those it has. */
+export function channelMissing(recording: Recording, channel: string | number, place: Place = {}): Finding {
+  const known = recording.channels.slice(0, named).map((_, c) => channelLabel(recording, c));
+  const more = recording.channels.length > named ? ', …' : '';
+  const values = {
+    channel: String(channel),
+    count: recording.channels.length,
+    known: known.join(', ') + more,
+  };
+  return finding('channel-missing', values, { file: recording.file, ...place });
+}

@@ -1,0 +1,74 @@
+import { designFiles } from '../../../core/files/designFiles';
+import { findingJson, resultJson } from '../../../core/files/tapsJson';
+import { blocked, type Finding } from '../../../core/findings/finding';
+import { problemLine } from '../../../core/findings/problemLine';
+import { design as runDesign } from '../../../core/pipeline/design';
+import { type Arguments, type Command, exit } from '../commandLine';
+import { newNodeHost } from '../nodeHost';
+import { designSummary } from '../summary';
+import { newTerminal, type Terminal } from '../terminal';
+import { openWorkplace } from '../workplace';
+import { writeFiles } from '../writeFiles';
+
+export const design: Command = {
+  name: 'design',
+  usage: 'DOC…',
+  summary: 'solves and writes the files',
+  help: [
+    'Designs the filter of each pairing document, proves it on the held-out data and writes coefficients, test vectors,',
+    'the design note and NAME.taps.json into the folder that the document names: all files or none. Files over a limit',
+    'are written too, with that finding first in the note, and the exit code is 1.',
+  ].join('\n'),
+  positionals: [1, 1000],
+  options: {
+    root: {
+      type: 'string',
+      value: 'FOLDER',
+      says: "folder that no path may leave (default: the current one, or the document's)",
+    },
+  },
+  async run(given) {
+    const terminal = newTerminal();
+    let worst: number = exit.ok;
+    for (const document of given.positionals) {
+      worst = Math.max(worst, await designOne(document, given, terminal));
+    }
+    return worst;
+  },
+};
+
+async function designOne(document: string, given: Arguments, terminal: Terminal): Promise<number> {
+  const workplace = await openWorkplace(document, given.text('root'));
+  if ('code' in workplace) return report(terminal, given, document, null, [workplace]);
+  const { root, folder, place, text } = workplace;
+  const host = newNodeHost(root, terminal.pace());
+  try {
+    const { result, findings } = await runDesign(host, text, place);
+    if (result === null) return report(terminal, given, document, text, findings);
+    const written = await writeFiles(root, folder, designFiles(result, host.newSha256));
+    if (blocked(written.findings)) return report(terminal, given, document, text, written.findings);
+    for (const found of findings) terminal.complain(problemLine(found, document, text));
+    if (given.flag('json')) {
+      terminal.print(JSON.stringify({ ...resultJson(result), written: written.files }, null, 2));
+    } else {
+      const files = written.files.map(({ path, change }) => `  ${change.padEnd(9)} ${path}`);
+      terminal.print([designSummary(result), ...files].join('\n'));
+    }
+    return findings.some((found) => found.code === 'over-limit') ? exit.failed : exit.ok;
+  } finally {
+    await host.close();
+  }
+}
+
+/** Prints findings that stopped a command. */
+function report(
+  terminal: Terminal,
+  given: Arguments,
+  document: string,
+  text: string | null,
+  findings: readonly Finding[],
+): number {
+  for (const found of findings) terminal.complain(problemLine(found, document, text));
+  if (given.flag('json')) terminal.print(JSON.stringify({ findings: findings.map(findingJson) }, null, 2));
+  return exit.badInput;
+}
