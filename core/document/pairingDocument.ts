@@ -1,5 +1,8 @@
 /** The pairing document after validation: every key is there, defaults filled in. */
 
+/** The version of the document's form, the value of its key `pairing`. */
+export const documentVersion = 1;
+
 export const jobs = ['cancel', 'identify', 'equalise', 'predict'] as const;
 export type Job = (typeof jobs)[number];
 

@@ -4,7 +4,7 @@ import { table } from './sentence';
 export const documentSentences = table({
   'document-too-large': {
     severity: 'blocker',
-    says: 'got a document of {got} bytes when expected at most {max}. Is this a pairing document?',
+    says: 'got a document of {size} bytes when expected at most {limit}. Is this a pairing document?',
   },
   'document-too-deep': {
     severity: 'blocker',
@@ -98,7 +98,7 @@ export const documentSentences = table({
   },
   'words-mixed': {
     severity: 'blocker',
-    says: '{key}: got {got} when the coefficients are {coefficients}: integers go with integers and floats with floats.',
+    says: '{key}: got {got} when the coefficients are {coefficients}: the filter computes in integers or in one float type throughout.',
   },
   'not-a-signal-word': {
     severity: 'blocker',

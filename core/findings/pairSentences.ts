@@ -54,10 +54,6 @@ export const pairSentences = table({
     severity: 'blocker',
     says: 'no such file; expected a pairing document.',
   },
-  'document-too-large': {
-    severity: 'blocker',
-    says: 'got {size} bytes when expected a pairing document of at most {limit}.',
-  },
   'document-exists': {
     severity: 'blocker',
     says: 'the document is there already and is left as it is. Name another with -o.',

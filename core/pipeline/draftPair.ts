@@ -1,5 +1,6 @@
 import { type Draft, draftDocument } from '../document/draftDocument';
 import type { Job, TrackEntry } from '../document/pairingDocument';
+import { readDocument } from '../document/readDocument';
 import { type Finding, finding, Refusal } from '../findings/finding';
 import { channelMissing, findChannelByText } from '../recordings/findChannel';
 import { openRecording } from '../recordings/openRecording';
@@ -68,8 +69,12 @@ export async function draftPair(host: Host, request: PairRequest): Promise<Draft
     rate,
     length: request.length ?? lengthFor(samples, inputChannels.length),
   };
+  const text = draftDocument(draft);
+  // A name that no document may hold (a backslash, say) shows only here.
+  const refused = readDocument(text).findings.filter((found) => found.severity === 'blocker');
+  if (refused.length > 0) throw new Refusal(refused.map(({ path, ...found }) => found));
   return {
-    text: draftDocument(draft),
+    text,
     inputs: inputChannels.map((channel) => channelLabel(input, channel)),
     desired: channelLabel(desired, desiredChannel),
     job,

@@ -1,5 +1,6 @@
 import { readFile, stat } from 'node:fs/promises';
 import { basename, dirname, relative, resolve, sep } from 'node:path';
+import { largestDocument } from '../../core/document/parseJson';
 import { type Finding, finding } from '../../core/findings/finding';
 import type { DocumentPlace } from '../../core/pipeline/pairing';
 import { staysInside } from './nodeHost';
@@ -13,9 +14,6 @@ export interface Workplace {
   place: DocumentPlace;
   text: string;
 }
-
-/** Larger texts are no pairing documents; the reader would refuse them. */
-const largestDocument = 4 * 1024 * 1024;
 
 /**
  * Reads a document named on the command line. The root is the one given, otherwise the current folder where that holds
