@@ -1,7 +1,7 @@
 const name = '[A-Za-z_][\\w:.-]*';
 const attributes = `(?:\\s+${name}="[^"<]*")*`;
 const token = new RegExp(
-  `<!--(?:(?!--)[^])*-->|<(${name})${attributes}\\s*(/?)>|</(${name})\\s*>|[^<>]+`,
+  `<!--(?:(?!--)[\\s\\S])*-->|<(${name})${attributes}\\s*(/?)>|</(${name})\\s*>|[^<>]+`,
   'y',
 );
 const entity = /&(?!(?:amp|lt|gt|quot|apos|#\d+|#x[\da-f]+);)/i;

@@ -1,0 +1,106 @@
+import { roundedDecibels } from '../figures/decibels';
+import type { Finding } from '../findings/finding';
+import { say } from '../findings/say';
+import type { DesignResult, ErrorFigure, HeldOutFigures, TakeSummary } from '../pipeline/designResult';
+import { arithmeticJson } from './arithmeticJson';
+import { type Mark, markText } from './generatedMark';
+import { type Json, jsonText } from './jsonText';
+import { openSelfDigest } from './selfDigest';
+
+/**
+ * Text of `NAME.taps.json`: the full result for programs. Coefficients and fixed-point values are newest-first whatever the
+ * order in the other files; decibels have two digits after the point; null stands for what is not there.
+ * The key `self` is left open for `closeSelfDigest`.
+ * @param files SHA-256 of every other file that is written, by its path from this file's folder
+ */
+export function tapsJson(result: DesignResult, mark: Mark, files: Readonly<Record<string, string>>): string {
+  return jsonText({
+    generated: markText(mark),
+    taps: 1,
+    ...resultJson(result),
+    files: { ...files },
+    self: openSelfDigest,
+  });
+}
+
+/** The keys of `NAME.taps.json` that speak of the result; `--json` prints the same. */
+export function resultJson(result: DesignResult): { [key: string]: Json } {
+  const { document } = result;
+  return {
+    document: { file: result.documentFile, sha256: result.documentSha256 },
+    title: document.title,
+    job: document.job,
+    sampleRate: result.sampleRate,
+    inputs: [...result.inputs],
+    desired: result.desired,
+    filter: { ...document.filter },
+    prepare: {
+      removeMean: document.prepare.removeMean,
+      band: document.prepare.band && { ...document.prepare.band },
+    },
+    recordings: result.recordings.map(({ file, sha256, format, sampleRate, samples, channels }) => ({
+      file,
+      sha256,
+      format,
+      sampleRate,
+      samples,
+      channels: [...channels],
+    })),
+    takes: result.takes.map(take),
+    coefficients: result.coefficients.map((row) => Array.from(row)),
+    means: { inputs: [...result.means.inputs], desired: result.means.desired },
+    inputPowers: [...result.inputPowers],
+    fit: figure(result.fit),
+    heldOut: result.heldOut && heldOut(result.heldOut),
+    method: result.method,
+    conditionNumber: result.conditionNumber,
+    arithmetic: arithmeticJson(result),
+    write: { symbol: document.write.symbol, order: document.write.order },
+    limits: { ...document.limits },
+    findings: result.findings.map(findingJson),
+  };
+}
+
+function take({ name, samples, inputs, desired, fit, heldOut, disturbanceOnly }: TakeSummary): Json {
+  const intervals = (list: TakeSummary['fit']) => list.map(({ from, to }) => ({ from, to }));
+  return {
+    name,
+    samples,
+    inputs: inputs.map(({ file, channel }) => ({ file, channel })),
+    desired: { file: desired.file, channel: desired.channel },
+    fit: intervals(fit),
+    heldOut: intervals(heldOut),
+    disturbanceOnly: intervals(disturbanceOnly),
+  };
+}
+
+function figure({ samples, mse, nmseDb }: ErrorFigure): { [key: string]: Json } {
+  return { samples, mse, nmseDb: roundedDecibels(nmseDb) };
+}
+
+function heldOut(figures: HeldOutFigures): Json {
+  return {
+    ...figure(figures),
+    disturbanceOnly: figures.disturbanceOnly,
+    bands: figures.bands.map(({ from, to, reductionDb }) => ({
+      from,
+      to,
+      reductionDb: roundedDecibels(reductionDb),
+      attainableDb: null,
+    })),
+    takes: figures.takes.map((of) => ({
+      name: of.name,
+      ...figure(of),
+      standardErrorDb: roundedDecibels(of.standardErrorDb),
+    })),
+  };
+}
+
+/** A finding as files and `--json` show it: its code, severity and place, and the sentence. */
+export function findingJson(found: Finding): { [key: string]: Json } {
+  const { code, severity, file, take, channel, from, to, line, path } = found;
+  const place = { file, take, channel, from, to, line, path: path && [...path] };
+  const known: { [key: string]: Json } = {};
+  for (const [key, value] of Object.entries(place)) if (value !== undefined) known[key] = value;
+  return { code, severity, ...known, message: say(found) };
+}

@@ -1,0 +1,74 @@
+import { decibels } from '../../figures/decibels';
+import { counted, grouped, noFigure, significant } from '../../figures/numbers';
+import { frequency } from '../../figures/units';
+import type { DesignResult, ErrorFigure } from '../../pipeline/designResult';
+import { name, section, table } from '../markdown';
+import { wantedSignalHides, wantedSignalInFit, wantedSignalReminder } from '../wantedSignal';
+
+/** Fit and held-out figures, for each take and by band. */
+export function outcome(result: DesignResult): string {
+  return section('Result', where(result), figures(result), wantedSignalReminder(result), ...bands(result));
+}
+
+function where(result: DesignResult): string {
+  const { heldOut, takes } = result;
+  const definition =
+    'NMSE is the power of the error relative to that of the desired signal over the same samples, means removed as in the fit; its negative is the reduction.';
+  if (heldOut === null) return `${definition} No interval is held out.`;
+  const which = heldOut.disturbanceOnly
+    ? `The held-out figures are over the disturbance-only part of the held-out intervals, where the wanted signal is absent.${leftOut(takes, heldOut.takes)}`
+    : 'The held-out figures are over data that the fit never saw.';
+  const fitToo = wantedSignalInFit(result)
+    ? ' The fit figure is over all of the fit intervals, with the wanted signal where it is present.'
+    : '';
+  return `${definition} ${which}${fitToo}`;
+}
+
+function leftOut(takes: readonly { name: string }[], measured: readonly { name: string }[]): string {
+  const without = takes.filter((take) => !measured.some((of) => of.name === take.name));
+  return without.length === 0
+    ? ''
+    : ` Left out, since they have no such part: ${without.map((take) => name(take.name)).join(', ')}.`;
+}
+
+function figures({ fit, heldOut, takes }: DesignResult): string {
+  const row = (what: string, { samples, mse, nmseDb }: ErrorFigure, error: number | null) => [
+    what,
+    grouped(samples),
+    significant(mse),
+    decibels(nmseDb),
+    error === null ? noFigure : decibels(error),
+  ];
+  const rows = [row('fit', fit, null)];
+  if (heldOut !== null) {
+    if (takes.length === 1) rows.push(row('held out', heldOut, heldOut.takes[0].standardErrorDb));
+    else {
+      rows.push(row('held out, these takes together', heldOut, null));
+      for (const take of heldOut.takes)
+        rows.push(row(`held out, take ${name(take.name)}`, take, take.standardErrorDb));
+    }
+  }
+  return table(['data', 'samples', 'mean squared error', 'NMSE', 'standard error'], rows, [
+    'samples',
+    'mean squared error',
+    'NMSE',
+    'standard error',
+  ]);
+}
+
+function bands(result: DesignResult): string[] {
+  const { heldOut, spectra } = result;
+  if (heldOut === null || heldOut.bands.length === 0) return [];
+  const caution = wantedSignalHides(result) ? ' The caution above holds for every row.' : '';
+  return [
+    `Held-out reduction by band, from ${counted(spectra.averages, 'averaged segment')} of ${counted(spectra.segment, 'sample')} (Hann window, half overlap); negative where the filter adds to the error.${caution}`,
+    table(
+      ['band', 'reduction'],
+      heldOut.bands.map(({ from, to, reductionDb }) => [
+        `${frequency(from)} to ${frequency(to)}`,
+        decibels(reductionDb),
+      ]),
+      ['band', 'reduction'],
+    ),
+  ];
+}
