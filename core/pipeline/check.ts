@@ -1,5 +1,6 @@
 import { digestSource } from '../bytes/digest';
 import { resolveInside } from '../document/paths';
+import { documentStem } from '../files/documentStem';
 import { readTaps, type TapsFile } from '../files/readTaps';
 import { selfDigestHolds } from '../files/selfDigest';
 import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
@@ -64,7 +65,7 @@ interface WrittenFiles {
 
 /** Reads the taps file and holds the digests it lists against the files beside it. */
 async function readWritten(host: Host, { document }: Pairing, place: DocumentPlace): Promise<WrittenFiles> {
-  const name = `${place.file.replace(/\.pairing\.json$/, '')}.taps.json`;
+  const name = `${documentStem(place.file)}.taps.json`;
   const within = (path: string) => (document.write.folder === '' ? path : `${document.write.folder}/${path}`);
   const file = within(name);
   const text = await readText(host, place.folder, file);

@@ -41,16 +41,26 @@ export function normalSystem(sums: NormalSums, powers: readonly number[]): Norma
   return { size, right, scale, matrix: { dense } };
 }
 
+/** Elements (i, j), i ≥ j, of `A + ρ I` with the matrix of the system. */
+export function elementsOf(
+  { size, matrix }: NormalSystem,
+  regularisation: number,
+): (i: number, j: number) => number {
+  if ('toeplitz' in matrix) {
+    const { toeplitz } = matrix;
+    return (i, j) => (i === j ? toeplitz[0] + regularisation : toeplitz[i - j]);
+  }
+  const { dense } = matrix;
+  return (i, j) => (i === j ? dense[i * size + i] + regularisation : dense[i * size + j]);
+}
+
 /** `(A + ρ I) v` with the matrix of the system. */
 export function multiply(system: NormalSystem, regularisation: number, v: Float64Array): Float64Array {
-  const { size, matrix } = system;
+  const { size } = system;
   const product = new Float64Array(size);
-  const element =
-    'toeplitz' in matrix
-      ? (i: number, j: number) => matrix.toeplitz[i - j]
-      : (i: number, j: number) => matrix.dense[i * size + j];
+  const element = elementsOf(system, regularisation);
   for (let i = 0; i < size; i++) {
-    let sum = (element(i, i) + regularisation) * v[i];
+    let sum = element(i, i) * v[i];
     for (let j = 0; j < i; j++) {
       const a = element(i, j);
       sum += a * v[j];
