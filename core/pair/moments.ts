@@ -1,4 +1,5 @@
 import type { Pace } from '../pace';
+import { newRunningMoments, type RunningMoments } from '../statistics/runningMoments';
 import type { Means } from './signals';
 import { signalReader } from './signals';
 import type { Take } from './take';
@@ -14,26 +15,6 @@ export interface Moments {
 
 const block = 65536;
 
-/** Count, mean and sum of squares about the mean: two of them are merged by Chan, Golub & LeVeque's rule (1979). */
-class Tally {
-  count = 0;
-  mean = 0;
-  squares = 0;
-
-  add(samples: Float64Array): void {
-    let sum = 0;
-    for (let k = 0; k < samples.length; k++) sum += samples[k];
-    const mean = sum / samples.length;
-    let squares = 0;
-    for (let k = 0; k < samples.length; k++) squares += (samples[k] - mean) * (samples[k] - mean);
-    const total = this.count + samples.length;
-    const gap = mean - this.mean;
-    this.squares += squares + (gap * gap * this.count * samples.length) / total;
-    this.mean += (gap * samples.length) / total;
-    this.count = total;
-  }
-}
-
 /**
  * One pass over the fit intervals.
  * @param removeMean whether the means are to be taken off; if not, they are given as 0
@@ -43,8 +24,8 @@ export async function measureMoments(
   removeMean: boolean,
   pace: Pace,
 ): Promise<Moments> {
-  const inputs = takes[0].inputs.map(() => new Tally());
-  const desired = new Tally();
+  const inputs = takes[0].inputs.map(() => newRunningMoments());
+  const desired = newRunningMoments();
   for (const take of takes) {
     const none = { inputs: take.inputs.map(() => 0), desired: 0 };
     const read = signalReader(take, { means: none, delay: 0 });
@@ -59,7 +40,8 @@ export async function measureMoments(
       }
     }
   }
-  const power = (tally: Tally) => tally.squares / tally.count + (removeMean ? 0 : tally.mean * tally.mean);
+  const power = (tally: RunningMoments) =>
+    tally.squares / tally.count + (removeMean ? 0 : tally.mean * tally.mean);
   return {
     means: {
       inputs: inputs.map((tally) => (removeMean ? tally.mean : 0)),
