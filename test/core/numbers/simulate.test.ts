@@ -1,9 +1,11 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { exactSums } from '../../../core/numbers/exactSums';
 import type { IntegerFormat } from '../../../core/numbers/scaling';
 import { integerSimulator } from '../../../core/numbers/simulate';
 import { wordRange } from '../../../core/numbers/words';
 import { worstCase } from '../../../core/numbers/worstCase';
+import { seededUniform } from '../../support/random';
 
 /** The contract's arithmetic in big integers alone: every addition on its own, then floor, then the output word. */
 function reference(values: number[][], inputs: number[][], f: IntegerFormat) {
@@ -17,24 +19,28 @@ function reference(values: number[][], inputs: number[][], f: IntegerFormat) {
   const output: number[] = [];
   for (let n = M - 1; n < inputs[0].length; n++) {
     let acc = 0n;
-    let hit = false;
+    let whole = 0n;
+    let clamped = false;
     const add = (term: bigint) => {
+      whole += term;
       acc += term;
-      if (acc > max || acc < min) {
-        hit = true;
-        acc = f.accumulatorOverflow === 'wrap' ? BigInt.asIntN(f.accumulator, acc) : acc > max ? max : min;
+      if (acc <= max && acc >= min) return;
+      if (f.accumulatorOverflow === 'wrap') acc = BigInt.asIntN(f.accumulator, acc);
+      else {
+        acc = acc > max ? max : min;
+        clamped = true;
       }
     };
     for (let r = 0; r < values.length; r++) {
       for (let k = 0; k < M; k++) add(BigInt(values[r][k]) * BigInt(inputs[r][n - k]));
     }
     if (f.fractionBits > 0) add(1n << BigInt(f.fractionBits - 1));
+    if (clamped || (f.accumulatorOverflow === 'wrap' && acc !== whole)) overflows++;
     let y = acc >> BigInt(f.fractionBits);
     if (y > outMax || y < outMin) {
       outputOverflows++;
       y = f.overflow === 'wrap' ? BigInt.asIntN(f.outputWord, y) : y > outMax ? outMax : outMin;
     }
-    if (hit) overflows++;
     output.push(Number(y));
   }
   return { output, accumulatorOverflows: overflows, outputOverflows };
@@ -89,6 +95,36 @@ describe('integerSimulator', () => {
       }),
       { numRuns: 3000 },
     );
+  });
+});
+
+describe('exactSums', () => {
+  it.each([
+    [16, 16, 1],
+    [16, 16, 3],
+    [24, 16, 2],
+    [32, 12, 1],
+  ])('are exact for %i-bit taps on %i-bit words, %i inputs, at the extremes', (word, inputWord, rows) => {
+    const uniform = seededUniform(word + rows);
+    const extremes = (bits: number, count: number) => {
+      const { min, max } = wordRange(bits);
+      return Float64Array.from({ length: count }, () => {
+        const u = uniform();
+        return u < 0.3 ? min : u < 0.6 ? max : Math.floor(min + uniform() * (max - min + 1));
+      });
+    };
+    const length = 200;
+    const values = Array.from({ length: rows }, () => extremes(word, length));
+    const inputs = Array.from({ length: rows }, () => extremes(inputWord, 5000));
+    const sums = exactSums(values, 2 ** (inputWord - 1))(inputs);
+    expect(sums.length).toBe(5000 - length + 1);
+    for (let n = 0; n < sums.length; n += 7) {
+      let want = 0n;
+      for (let r = 0; r < rows; r++) {
+        for (let k = 0; k < length; k++) want += BigInt(values[r][k]) * BigInt(inputs[r][n + length - 1 - k]);
+      }
+      expect(BigInt(sums[n])).toBe(want);
+    }
   });
 });
 
