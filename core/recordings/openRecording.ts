@@ -12,7 +12,7 @@ import { openWav } from './wav/openWav';
  */
 export async function openRecording(source: ByteSource, file: string, pace: Pace): Promise<Opened> {
   const start = String.fromCharCode(...(await source.read(0, Math.min(source.size, 12))));
-  if (/^(RIFF|RF64|BW64|RIFX)/.test(start)) return openWav(source, file, pace);
-  if (start.startsWith('\x93NUMPY')) return openNpy(source, file, pace);
+  if (/^(RIFF|RF64|BW64|RIFX)/.test(start)) return openWav(source, file);
+  if (start.startsWith('\x93NUMPY')) return openNpy(source, file);
   return openText(source, file, pace);
 }

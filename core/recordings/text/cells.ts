@@ -1,0 +1,43 @@
+/** Separators that are looked for; a blank stands for runs of blanks. */
+export type Separator = '\t' | ';' | ',' | ' ';
+
+/**
+ * The cells of a line (RFC 4180, and blanks as separators): blanks round cells do not count, quotes hold separators, a
+ * doubled quote is a quote.
+ */
+export function splitCells(line: string, separator: Separator): string[] {
+  const text = separator === ' ' ? line.trim() : line;
+  const cells: string[] = [];
+  let cell = '';
+  let quoted = false;
+  let i = 0;
+  const end = () => {
+    cells.push(quoted ? cell : cell.trim());
+    cell = '';
+    quoted = false;
+  };
+  while (i < text.length) {
+    const character = text[i];
+    if (character === '"' && cell.trim() === '' && !quoted) {
+      cell = '';
+      quoted = true;
+      for (i++; i < text.length; i++) {
+        if (text[i] !== '"') cell += text[i];
+        else if (text[i + 1] === '"') cell += text[i++];
+        else break;
+      }
+    } else if (character === separator || (separator === ' ' && character === '\t')) {
+      end();
+      if (separator === ' ') while (text[i + 1] === ' ' || text[i + 1] === '\t') i++;
+    } else if (!quoted) cell += character;
+    i++;
+  }
+  end();
+  return cells;
+}
+
+/** Lines that say nothing about the numbers. A semicolon starts one where it is not the separator. */
+export function isComment(line: string, separator: Separator | null): boolean {
+  const start = line.trimStart();
+  return /^(#|%|\/\/)/.test(start) || (start.startsWith(';') && separator !== null && separator !== ';');
+}

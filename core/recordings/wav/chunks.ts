@@ -1,0 +1,81 @@
+import type { ByteSource } from '../../bytes/byteSource';
+import { type Finding, finding } from '../../findings/finding';
+import { viewOf } from '../viewOf';
+
+/** Where a chunk's content is. */
+export interface Chunk {
+  id: string;
+  from: number;
+  /** Bytes that are there; at most what is declared. */
+  size: number;
+  /** Bytes that the header declares. */
+  declared: number;
+}
+
+export interface Chunks {
+  format: Chunk | null;
+  data: Chunk | null;
+  findings: Finding[];
+}
+
+/** Sizes that writers to a pipe leave, who cannot go back and fill them in. */
+const unknownSize = 0xffffffff;
+
+/** Chunks looked at before the file is given up: no writer makes more before its data. */
+const mostChunks = 10_000;
+
+/**
+ * Walks the chunks of a RIFF (Microsoft & IBM 1991), RF64 or BW64 file (EBU Tech 3306, ITU-R BS.2088) up to and past the
+ * data. Sizes are clamped to the bytes that are there. A data chunk that declares 0 or 0xFFFFFFFF bytes reaches to the
+ * end of the file.
+ */
+export async function findChunks(source: ByteSource, file: string): Promise<Chunks> {
+  const found: Chunks = { format: null, data: null, findings: [] };
+  let wideDataSize: number | null = null;
+  for (let at = 12, seen = 0; at + 8 <= source.size && seen < mostChunks; seen++) {
+    const head = viewOf(await source.read(at, 8));
+    const id = idOf(head);
+    let declared = head.getUint32(4, true);
+    const from = at + 8;
+    if (id === 'ds64' && source.size - from >= 16)
+      wideDataSize = wide(viewOf(await source.read(from, 16)), 8);
+    if (id === 'data') {
+      if (declared === unknownSize && wideDataSize !== null) declared = wideDataSize;
+      found.data = dataChunk(source, file, from, declared, found.findings);
+      // Chunks after the data matter only where the format is still missing.
+      if (found.format !== null) return found;
+      at = from + found.data.size + (found.data.size % 2);
+      continue;
+    }
+    const size = Math.min(declared, source.size - from);
+    if (id === 'fmt ' && found.format === null) found.format = { id, from, size, declared };
+    at = from + declared + (declared % 2);
+  }
+  return found;
+}
+
+function dataChunk(
+  source: ByteSource,
+  file: string,
+  from: number,
+  declared: number,
+  findings: Finding[],
+): Chunk {
+  const there = source.size - from;
+  const open = declared === unknownSize || (declared === 0 && there > 0);
+  if (open) {
+    findings.push(finding('open-data', { declared, there }, { file }));
+    return { id: 'data', from, size: there, declared: there };
+  }
+  if (declared > there) findings.push(finding('truncated', { declared, there }, { file }));
+  return { id: 'data', from, size: Math.min(declared, there), declared };
+}
+
+function idOf(view: DataView): string {
+  return String.fromCharCode(view.getUint8(0), view.getUint8(1), view.getUint8(2), view.getUint8(3));
+}
+
+/** A 64-bit size; beyond 2^53 it is larger than any file and the rounding does not matter. */
+function wide(view: DataView, offset: number): number {
+  return view.getUint32(offset + 4, true) * 4294967296 + view.getUint32(offset, true);
+}
