@@ -32,6 +32,10 @@ export interface Draft {
 export function draftDocument(draft: Draft): string {
   const { job, inputs, desired, sampleRate, length } = draft;
   const title = cleanTitle(draft.title);
+  // What only few will turn stays out of a new document.
+  const { symmetry, ...shape } = withDefaults(filter(job, inputs.length), { length });
+  const { cyclesPerMac, ...numbers } = withDefaults(arithmetic(inputs.length));
+  const { attributes, ...written } = withDefaults(write(title));
   return jsonText({
     pairing: documentVersion,
     title,
@@ -39,9 +43,9 @@ export function draftDocument(draft: Draft): string {
     ...(sampleRate === null ? {} : { sampleRate }),
     takes: [{ name: 'take 1', inputs: inputs.map(track), desired: track(desired), ...split(draft) }],
     prepare: given(withDefaults(prepare)),
-    filter: given(withDefaults(filter(job), { length })),
-    arithmetic: given(withDefaults(arithmetic(inputs.length))),
-    write: given(withDefaults(write(title))),
+    filter: given(shape),
+    arithmetic: given(numbers),
+    write: given(written),
   });
 }
 

@@ -15,14 +15,27 @@ export type Rounding = (typeof roundings)[number];
 export const overflows = ['saturate', 'wrap'] as const;
 export type Overflow = (typeof overflows)[number];
 
-export const languages = ['c', 'rs', 'csv', 'npy'] as const;
+export const languages = ['c', 'c-source', 'rs', 'csv', 'npy'] as const;
 export type Language = (typeof languages)[number];
+
+export const symmetries = ['none', 'even', 'odd'] as const;
+export type Symmetry = (typeof symmetries)[number];
 
 export const orders = ['newest-first', 'oldest-first'] as const;
 export type Order = (typeof orders)[number];
 
 /** Bits of an integer word, or a floating-point type. */
 export type Word = number | 'float32' | 'float64';
+
+/** The response of one input's taps is held at one frequency; its phase is that of the symmetry, or of the delay. */
+export interface FixedGain {
+  /** Number of the input, from 1. */
+  input: number;
+  /** Hz. */
+  frequency: number;
+  /** In the unit of the desired signal for one of the input. */
+  gain: number;
+}
 
 /** A channel of a file; `channel` is a name from the header or a number from 1. */
 export interface TrackEntry {
@@ -62,7 +75,15 @@ export interface PairingDocument {
   sampleRate: number | null;
   takes: TakeEntry[];
   prepare: { removeMean: boolean; band: { from: number; to: number } | null };
-  filter: { length: number; delay: number; regularisation: number; windowing: Windowing };
+  filter: {
+    length: number;
+    delay: number;
+    regularisation: number;
+    windowing: Windowing;
+    /** `even`: w[k] = w[M-1-k] for each input; `odd`: w[k] = -w[M-1-k]. */
+    symmetry: Symmetry;
+    fixedGain: FixedGain | null;
+  };
   arithmetic: {
     word: Word;
     /** Null: as many as the largest coefficient allows. */
@@ -73,6 +94,8 @@ export interface PairingDocument {
     overflow: Overflow;
     input: SignalWord;
     output: SignalWord;
+    /** Cycles that the target needs for a multiply-accumulate. */
+    cyclesPerMac: number;
   };
   write: {
     folder: string;
@@ -81,6 +104,8 @@ export interface PairingDocument {
     order: Order;
     /** Samples of the test vectors. */
     testVectors: number;
+    /** Placed before and after the name of a coefficient array in C, and before the item in Rust; '' for none. */
+    attributes: { cBefore: string; cAfter: string; rust: string };
   };
   limits: { heldOutNmse: number | null; quantisationLoss: number | null };
 }

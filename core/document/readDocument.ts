@@ -56,10 +56,11 @@ function readKeys(keys: Keys): PairingDocument | undefined {
   const job = keys.required('job', oneOf(jobs));
   const sampleRate = keys.optional('sampleRate', orNull(positiveUpTo(highestRate)), null);
   const takeEntries = keys.required('takes', takes);
+  const inputs = takeEntries?.[0].inputs.length ?? null;
   const sections = {
     prepare: keys.section('prepare', prepare),
-    filter: keys.section('filter', filter(job ?? 'cancel')),
-    arithmetic: keys.section('arithmetic', arithmetic(takeEntries?.[0].inputs.length ?? null)),
+    filter: keys.section('filter', filter(job ?? 'cancel', inputs)),
+    arithmetic: keys.section('arithmetic', arithmetic(inputs)),
     write: keys.section('write', write(titleText)),
     limits: keys.section('limits', limits),
   };

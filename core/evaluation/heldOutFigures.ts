@@ -1,4 +1,3 @@
-import { powerDecibels } from '../figures/decibels';
 import { type TargetFilter, targetInput, targetSimulator } from '../numbers/targetFilter';
 import type { Pace } from '../pace';
 import { signalReader } from '../pair/signals';
@@ -8,6 +7,7 @@ import { type Filter, filterLength } from './filter';
 import { filterStretch } from './filterStretch';
 import { type ErrorFigure, errorFigure } from './fitFigure';
 import type { Run } from './measuredRuns';
+import { newTargetTally, type TargetFigures, type TargetTally } from './targetTally';
 
 export interface TakeFigure extends ErrorFigure {
   name: string;
@@ -26,18 +26,6 @@ export interface SpectraFigures {
   desired: Float64Array;
   output: Float64Array;
   error: Float64Array;
-}
-
-/** The target's filter beside the ideal one over the same n. */
-export interface TargetFigures {
-  nmseDb: number;
-  /** Rise of the NMSE in dB. */
-  quantisationLossDb: number;
-  /** `10 log10(Σ(y_q - y)² / Σ y²)`. */
-  outputErrorDb: number;
-  accumulatorOverflows: number;
-  outputOverflows: number;
-  samples: number;
 }
 
 export interface Evaluation {
@@ -109,7 +97,8 @@ async function evaluateRun(
       sinks.welch.push([desired, output, desired.map((d, n) => d - output[n])]);
       const raw = await readRaw(from, from + desired.length, history);
       const simulation = simulate(raw.inputs.map((x, r) => targetInput(target, r, x)));
-      sinks.targetTally.add(desired, output, simulation, target.scaling.outputCount);
+      sinks.targetTally.add(desired, output, simulation.output, target.scaling.outputCount);
+      sinks.targetTally.count(simulation);
     });
   }
 }
@@ -120,47 +109,6 @@ function takeFigure(tally: ErrorTally): ErrorFigure & { standardErrorDb: number 
     ...errorFigure(tally.samples, tally.errorEnergy, tally.desiredEnergy),
     // To first order: d(10 log10 r) = (10 / ln 10) dr / r.
     standardErrorDb: relative === null ? null : 4.342944819032518 * relative,
-  };
-}
-
-interface TargetTally {
-  add(
-    desired: Float64Array,
-    output: Float64Array,
-    simulation: { output: Float64Array; accumulatorOverflows: number; outputOverflows: number },
-    outputCount: number,
-  ): void;
-  figures(ideal: ErrorFigure, desiredEnergy: number): TargetFigures;
-}
-
-function newTargetTally(): TargetTally {
-  let errorEnergy = 0;
-  let gapEnergy = 0;
-  let outputEnergy = 0;
-  const counts = { accumulatorOverflows: 0, outputOverflows: 0, samples: 0 };
-  return {
-    add(desired, output, simulation, outputCount) {
-      for (let n = 0; n < desired.length; n++) {
-        const y = simulation.output[n] * outputCount;
-        const e = desired[n] - y;
-        const gap = y - output[n];
-        errorEnergy += e * e;
-        gapEnergy += gap * gap;
-        outputEnergy += output[n] * output[n];
-      }
-      counts.accumulatorOverflows += simulation.accumulatorOverflows;
-      counts.outputOverflows += simulation.outputOverflows;
-      counts.samples += desired.length;
-    },
-    figures(ideal, desiredEnergy) {
-      const nmseDb = powerDecibels(errorEnergy / desiredEnergy);
-      return {
-        nmseDb,
-        quantisationLossDb: nmseDb - ideal.nmseDb,
-        outputErrorDb: powerDecibels(gapEnergy / outputEnergy),
-        ...counts,
-      };
-    },
   };
 }
 

@@ -1,7 +1,8 @@
 import type { PairingDocument } from '../document/pairingDocument';
 import { decibels } from '../figures/decibels';
 import { type Finding, finding } from '../findings/finding';
-import type { TakeFigure, TargetFigures } from './heldOutFigures';
+import type { TakeFigure } from './heldOutFigures';
+import type { TargetFigures } from './targetTally';
 
 /** What the limits are held against. */
 export interface LimitedFigures {

@@ -1,4 +1,5 @@
 import { roundedDecibels } from '../figures/decibels';
+import type { WorstCase } from '../numbers/worstCase';
 import type { DesignResult } from '../pipeline/designResult';
 import type { Json } from './jsonText';
 import { signalWords } from './signalWords';
@@ -7,7 +8,6 @@ import { signalWords } from './signalWords';
 export function arithmeticJson({ document, arithmetic }: DesignResult): Json {
   const asked = document.arithmetic;
   const words = signalWords(document);
-  const { worstCase } = arithmetic;
   return {
     word: asked.word,
     fractionBits: arithmetic.fractionBits,
@@ -17,10 +17,10 @@ export function arithmeticJson({ document, arithmetic }: DesignResult): Json {
     quantisationLossDb: roundedDecibels(arithmetic.quantisationLossDb),
     outputErrorDb: roundedDecibels(arithmetic.outputErrorDb),
     accumulator: asked.accumulator,
-    accumulatorBits: worstCase === null ? null : worstCase.bits,
+    accumulatorBits: arithmetic.worstCase?.bits ?? null,
     accumulatorOverflow: asked.accumulatorOverflow,
-    // Beyond 2^53 a number would lose digits.
-    worstCase: worstCase === null ? null : { min: String(worstCase.min), max: String(worstCase.max) },
+    worstCase: bound(arithmetic.worstCase),
+    recordedCase: bound(arithmetic.recordedCase),
     overflow: asked.overflow,
     samples: arithmetic.samples,
     overflows: arithmetic.accumulatorOverflows + arithmetic.outputOverflows,
@@ -39,4 +39,9 @@ export function arithmeticJson({ document, arithmetic }: DesignResult): Json {
       desiredMeanCounts: arithmetic.desiredMeanCounts,
     },
   };
+}
+
+/** Beyond 2^53 a number would lose digits, so that bounds are texts. */
+function bound(limits: WorstCase | null): Json {
+  return limits === null ? null : { min: String(limits.min), max: String(limits.max), bits: limits.bits };
 }

@@ -1,6 +1,7 @@
 import type { DesignResult } from '../pipeline/designResult';
 import { cLiteral } from './literals';
 import { meanType, type NumberType, numberType } from './numberTypes';
+import { symmetryNumber } from './orderedRow';
 import { addsDesiredMean } from './outputSteps';
 import { signalWords } from './signalWords';
 
@@ -18,6 +19,11 @@ export function cMacros(result: DesignResult): string[] {
       'NEWEST_FIRST',
       document.write.order === 'newest-first' ? '1' : '0',
       '1: row[0] multiplies the newest sample',
+    ],
+    [
+      'SYMMETRY',
+      bracketed(symmetryNumber[document.filter.symmetry]),
+      '1: w[k] = w[M-1-k]; -1: w[k] = -w[M-1-k]; 0: neither',
     ],
     ['DELAY', bracketed(document.filter.delay), 'samples: e[n] = d[n - DELAY] - y[n]'],
     ...(arithmetic.fractionBits === null ? [] : integerRows(result)),

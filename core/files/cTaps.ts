@@ -43,7 +43,9 @@ const shift = [
 ];
 
 function array({ document, arithmetic, inputs }: DesignResult): string[] {
-  const { symbol, order } = document.write;
+  const { symbol, order, attributes } = document.write;
+  const before = attributes.cBefore === '' ? '' : `${attributes.cBefore} `;
+  const after = attributes.cAfter === '' ? '' : ` ${attributes.cAfter}`;
   const type = numberType(document.arithmetic.word);
   const prefix = symbol.toUpperCase();
   const row = inputs.length === 1 ? '' : `r * ${prefix}_LENGTH + `;
@@ -51,7 +53,7 @@ function array({ document, arithmetic, inputs }: DesignResult): string[] {
   const of = inputs.length === 1 ? '' : '_r';
   return [
     `/* tap${of}[k], which multiplies x${of}[n - k], is ${symbol}_taps[${row}${at}] */`,
-    `static const ${type.c} ${symbol}_taps[${prefix}_INPUTS * ${prefix}_LENGTH] = {`,
+    `static const ${type.c} ${before}${symbol}_taps[${prefix}_INPUTS * ${prefix}_LENGTH]${after} = {`,
     ...arithmetic.values.flatMap((row, r) => [
       `    /* ${r}: ${asciiText(inputs[r])} */`,
       listed(

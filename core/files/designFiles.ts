@@ -4,6 +4,7 @@ import { impulsePicture } from '../note/pictures/impulse';
 import { magnitudePicture } from '../note/pictures/magnitude';
 import { spectraPicture } from '../note/pictures/spectra';
 import type { DesignResult } from '../pipeline/designResult';
+import { cFilterHeader, cFilterSource } from './cFilter';
 import { csvTaps } from './csvTaps';
 import { cTaps } from './cTaps';
 import { cVectors } from './cVectors';
@@ -11,6 +12,7 @@ import { documentStem } from './documentStem';
 import { type Mark, madeFromDigest, markLine } from './generatedMark';
 import { npyTaps } from './npyTaps';
 import { rustTaps } from './rustTaps';
+import { rustVectors } from './rustVectors';
 import { closeSelfDigest } from './selfDigest';
 import { tapsJson } from './tapsJson';
 
@@ -52,15 +54,23 @@ export function designFiles(result: DesignResult, newSha256: NewSha256): DesignF
     : all.map(({ path, bytes }) => ({ path: `${folder}/${path}`, bytes }));
 }
 
-/** The coefficients in the languages asked for, and the test vectors for C. */
+/** The coefficients in the languages asked for, and test vectors where the language has them. */
 function sources(result: DesignResult, mark: Mark): DesignFile[] {
   const { symbol, languages } = result.document.write;
   const files: DesignFile[] = [];
-  if (languages.includes('c')) {
+  const vectors = result.vectors.expected.length > 0;
+  if (languages.includes('c') || languages.includes('c-source')) {
     files.push(text(`${symbol}_taps.h`, cTaps(result, mark)));
-    if (result.vectors.expected.length > 0) files.push(text(`${symbol}_vectors.h`, cVectors(result, mark)));
+    if (vectors) files.push(text(`${symbol}_vectors.h`, cVectors(result, mark)));
   }
-  if (languages.includes('rs')) files.push(text(`${symbol}_taps.rs`, rustTaps(result, mark)));
+  if (languages.includes('c-source')) {
+    files.push(text(`${symbol}_filter.h`, cFilterHeader(result, mark)));
+    files.push(text(`${symbol}_filter.c`, cFilterSource(result, mark)));
+  }
+  if (languages.includes('rs')) {
+    files.push(text(`${symbol}_taps.rs`, rustTaps(result, mark)));
+    if (vectors) files.push(text(`${symbol}_vectors.rs`, rustVectors(result, mark)));
+  }
   if (languages.includes('csv')) files.push(text(`${symbol}_taps.csv`, csvTaps(result, mark)));
   if (languages.includes('npy')) files.push({ path: `${symbol}_taps.npy`, bytes: npyTaps(result, mark) });
   return files;

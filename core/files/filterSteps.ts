@@ -7,6 +7,7 @@ import type { StepStyle } from './firmwareSteps';
 export function filterSteps(result: DesignResult, style: StepStyle): string[] {
   return [
     history(result),
+    ...symmetry(result),
     ...(result.arithmetic.fractionBits === null ? floats(result, style) : integers(result, style)),
   ];
 }
@@ -20,6 +21,16 @@ function history({ document, inputs }: DesignResult): string {
   return unusable === 0
     ? `${keep}.`
     : `${keep}; do not use the first ${counted(unusable, 'output')} after a start, which still see those zeros.`;
+}
+
+/** Half the multiplications, where the taps allow it; the sum stays the same. */
+function symmetry({ document }: DesignResult): string[] {
+  const { symmetry: kind, length } = document.filter;
+  if (kind === 'none') return [];
+  const sign = kind === 'even' ? 'plus' : 'minus';
+  return [
+    `The taps mirror each other: multiply x[n - k] ${sign} x[n - ${length - 1} + k], which needs one bit more than x, once by tap[k]. In an accumulator that saturates the order of additions counts: there multiply one by one.`,
+  ];
 }
 
 function sum({ document, inputs }: DesignResult): string {

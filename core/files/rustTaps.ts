@@ -4,7 +4,7 @@ import { type Mark, markLine } from './generatedMark';
 import { headComment } from './headComment';
 import { listed, literal } from './literals';
 import { meanType, type NumberType, numberType } from './numberTypes';
-import { orderedRow } from './orderedRow';
+import { orderedRow, symmetryNumber } from './orderedRow';
 import { addsDesiredMean } from './outputSteps';
 import { signalWords } from './signalWords';
 
@@ -24,6 +24,7 @@ export function rustTaps(result: DesignResult, mark: Mark): string {
     ...constants(result),
     '',
     `/// tap${of}[k], which multiplies x${of}[n - k], is \`TAPS[${of === '' ? 0 : 'r'}][${index}]\`.`,
+    ...(document.write.attributes.rust === '' ? [] : [document.write.attributes.rust]),
     `pub static TAPS: [[${type.rust}; LENGTH]; INPUTS] = [`,
     ...arithmetic.values.flatMap((row, r) => [
       `    // ${r}: ${asciiText(inputs[r])}`,
@@ -52,6 +53,7 @@ function constants(result: DesignResult): string[] {
     `pub const LENGTH: usize = ${document.filter.length};`,
     `pub const INPUTS: usize = ${result.inputs.length};`,
     `pub const NEWEST_FIRST: bool = ${document.write.order === 'newest-first'};`,
+    `pub const SYMMETRY: i32 = ${symmetryNumber[document.filter.symmetry]};`,
     `pub const DELAY: i32 = ${document.filter.delay};`,
     `pub const INPUT_MEANS: ${means};`,
     ...(addsDesiredMean(result) ? [`pub const DESIRED_MEAN: ${output.rust} = ${mean};`] : []),

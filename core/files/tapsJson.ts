@@ -3,9 +3,11 @@ import type { Finding } from '../findings/finding';
 import { say } from '../findings/say';
 import type { DesignResult, ErrorFigure, HeldOutFigures, TakeSummary } from '../pipeline/designResult';
 import { arithmeticJson } from './arithmeticJson';
+import { filterCost } from './filterCost';
 import { type Mark, markText } from './generatedMark';
 import { type Json, jsonText } from './jsonText';
 import { openSelfDigest } from './selfDigest';
+import { shapeJson, wordsJson } from './wordsJson';
 
 /**
  * Text of `NAME.taps.json`: the full result for programs. Coefficients and fixed-point values are newest-first whatever the
@@ -33,7 +35,7 @@ export function resultJson(result: DesignResult): { [key: string]: Json } {
     sampleRate: result.sampleRate,
     inputs: [...result.inputs],
     desired: result.desired,
-    filter: { ...document.filter },
+    filter: { ...document.filter, fixedGain: document.filter.fixedGain && { ...document.filter.fixedGain } },
     prepare: {
       removeMean: document.prepare.removeMean,
       band: document.prepare.band && { ...document.prepare.band },
@@ -55,6 +57,9 @@ export function resultJson(result: DesignResult): { [key: string]: Json } {
     method: result.method,
     conditionNumber: result.conditionNumber,
     arithmetic: arithmeticJson(result),
+    shape: shapeJson(result.shape),
+    words: wordsJson(result),
+    cost: { ...filterCost(result), cyclesPerMac: document.arithmetic.cyclesPerMac },
     write: { symbol: document.write.symbol, order: document.write.order },
     limits: { ...document.limits },
     findings: result.findings.map(findingJson),

@@ -56,7 +56,19 @@ export const designSentences = table({
   },
   'overflow-possible': {
     severity: 'caution',
-    says: 'the worst input needs an accumulator of {bits} bits when {accumulator} are given; no sample of the recording came to that. A wider accumulator or fewer fraction bits rule it out.',
+    says: 'the worst input needs an accumulator of {bits} bits when {accumulator} are given; no sample of the recording came to that. {cure}',
+  },
+  'gain-frequency': {
+    severity: 'blocker',
+    says: 'a gain is fixed at {frequency} Hz when expected at most {limit} Hz, half the sample rate.',
+  },
+  'gain-unreachable': {
+    severity: 'blocker',
+    says: 'symmetric taps of this length have no gain at {frequency} Hz whatever their values. Take an odd length, another frequency, or no symmetry.',
+  },
+  'gain-not-exact': {
+    severity: 'note',
+    says: 'the integers have a gain of {got} at {frequency} Hz when {expected} is fixed: {why}.',
   },
   'band-unsupported': {
     severity: 'blocker',

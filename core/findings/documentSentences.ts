@@ -124,5 +124,21 @@ export const documentSentences = table({
     severity: 'blocker',
     says: '{key}: got {got}; names with an underscore at either end or two in a row become names that C and C++ keep for the compiler. Choose another name.',
   },
+  'fixed-gain-odd': {
+    severity: 'blocker',
+    says: '{key}: a gain cannot be fixed for antisymmetric taps ("symmetry": "odd"), whose phase is a quarter turn and whose gain at 0 Hz is 0. Remove one of the two.',
+  },
+  'no-free-taps': {
+    severity: 'blocker',
+    says: '{key}: one antisymmetric tap is always 0. Take a length of 2 or more.',
+  },
+  'fixed-gain-input': {
+    severity: 'blocker',
+    says: '{key}: got input {got} when the takes have {inputs}. Give the number of one of them, from 1.',
+  },
+  'attribute-form': {
+    severity: 'blocker',
+    says: '{key}: got {got} when expected letters, digits, blanks and _ ( ) [ ] , . : = + < > # " - with quotes and brackets in pairs (for Rust: #[...]).',
+  },
   'more-findings': { severity: 'note', says: '{count} more findings are not shown.' },
 });

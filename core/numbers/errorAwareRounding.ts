@@ -1,4 +1,4 @@
-import { clamp, roundHalfUp, type WordRange, wordRange } from './words';
+import { clamp, roundHalfUp, type WordRange } from './words';
 
 /**
  * What rounding costs: `δᵀ H δ` for integers that are off their real targets by δ steps.
@@ -19,10 +19,9 @@ export interface RoundingCost {
  * costs more than plain rounding. Without a factor only the steps from plain rounding are taken.
  * 2 size² multiply-adds and 2 size for each step taken.
  * @param targets real coefficients in steps (times 2^F)
- * @param word bits that every integer must fit
+ * @param range that every integer must keep to
  */
-export function roundErrorAware(targets: Float64Array, cost: RoundingCost, word: number): Float64Array {
-  const range = wordRange(word);
+export function roundErrorAware(targets: Float64Array, cost: RoundingCost, range: WordRange): Float64Array {
   const plain = targets.map((value) => clamp(roundHalfUp(value) + 0, range));
   improve(plain, targets, cost, range);
   if (cost.factor === null) return plain;
@@ -38,7 +37,7 @@ export function roundingCost(values: Float64Array, targets: Float64Array, cost: 
 }
 
 /** `H δ`. */
-function gradientOf(
+export function gradientOf(
   values: Float64Array,
   targets: Float64Array,
   { size, element }: RoundingCost,
@@ -100,9 +99,18 @@ function improve(
     }
     if (best < 0) return;
     const step = gradient[best] > 0 ? -1 : 1;
-    values[best] += step;
-    for (let i = 0; i < size; i++) {
-      gradient[i] += step * (i >= best ? element(i, best) : element(best, i));
-    }
+    takeStep(values, gradient, cost, best, step);
   }
+}
+
+/** Moves one value and keeps the gradient true. */
+export function takeStep(
+  values: Float64Array,
+  gradient: Float64Array,
+  { size, element }: RoundingCost,
+  at: number,
+  step: number,
+): void {
+  values[at] += step;
+  for (let i = 0; i < size; i++) gradient[i] += step * (i >= at ? element(i, at) : element(at, i));
 }

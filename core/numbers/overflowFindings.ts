@@ -1,4 +1,5 @@
 import { type Finding, finding } from '../findings/finding';
+import type { IntegerFormat } from './scaling';
 import { integerFormat, type TargetFilter } from './targetFilter';
 import { worstCase } from './worstCase';
 
@@ -24,14 +25,18 @@ export function overflowFindings(target: TargetFilter, counts: OverflowCounts): 
           where: 'the accumulator',
           count: counts.accumulatorOverflows,
           samples: counts.samples,
-          cure: `An accumulator of ${bits} bits, or ${bits - accumulator} fraction bits fewer, rules it out.`,
+          cure: overflowCure(format, bits),
         },
         { path: ['arithmetic', 'accumulator'] },
       ),
     );
   } else if (bits > accumulator) {
     findings.push(
-      finding('overflow-possible', { bits, accumulator }, { path: ['arithmetic', 'accumulator'] }),
+      finding(
+        'overflow-possible',
+        { bits, accumulator, cure: overflowCure(format, bits) },
+        { path: ['arithmetic', 'accumulator'] },
+      ),
     );
   }
   if (counts.outputOverflows > 0) {
@@ -49,4 +54,19 @@ export function overflowFindings(target: TargetFilter, counts: OverflowCounts): 
     );
   }
   return findings;
+}
+
+/** What lets the worst case fit: each bit less in the taps or in the inputs takes one off it. */
+function overflowCure({ accumulator, fractionBits, inputWord }: IntegerFormat, bits: number): string {
+  const more = bits - accumulator;
+  const cures: string[] = [];
+  if (bits <= 64) cures.push(`an accumulator of ${bits} bits`);
+  if (fractionBits >= more) cures.push(`at most ${fractionBits - more} fraction bits`);
+  if (inputWord - more >= 2) {
+    cures.push(`inputs shifted right by ${more} (input.word ${inputWord - more} at the same full scale)`);
+  }
+  if (cures.length === 0) return 'Take a shorter filter or shorter words.';
+  const last = cures.pop();
+  const list = cures.length === 0 ? last : `${cures.join(', ')} or ${last}`;
+  return `To rule it out take ${list}.`;
 }

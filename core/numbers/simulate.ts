@@ -1,6 +1,6 @@
 import { exactSums } from './exactSums';
 import type { IntegerFormat } from './scaling';
-import { wideSums } from './wideSums';
+import { splitSums, wideSums } from './wideSums';
 import { clamp, powerOfTwo, type WordRange, wordRange, wrap } from './words';
 import { worstCase } from './worstCase';
 
@@ -32,7 +32,10 @@ export function integerSimulator(values: readonly Float64Array[], format: Intege
   if (format.accumulatorOverflow === 'saturate' && bits > format.accumulator) {
     return clampingSimulator(values, format);
   }
-  return narrow ? narrowSimulator(values, format) : wideSimulator(values, format);
+  if (narrow) return narrowSimulator(values, format);
+  // Outputs beyond 2^53 lose low digits: no harm where they saturate.
+  const exact = format.overflow === 'saturate' || bits - format.fractionBits <= 53;
+  return bits <= format.accumulator && exact ? roomySimulator(values, format) : wideSimulator(values, format);
 }
 
 /** Sums in doubles; an accumulator of more than 53 bits cannot wrap here. */
@@ -58,6 +61,33 @@ function narrowSimulator(values: readonly Float64Array[], format: IntegerFormat)
       output[n] = intoWord(value, word);
     }
     return { output, accumulatorOverflows, outputOverflows };
+  };
+}
+
+/** Sums beyond doubles in an accumulator that none of them overflows: two doubles do. */
+function roomySimulator(values: readonly Float64Array[], format: IntegerFormat): Simulator {
+  const sums = splitSums(values);
+  const { fractionBits } = format;
+  const word = wordRange(format.outputWord);
+  const intoWord = format.overflow === 'saturate' ? clamp : wrap;
+  // The rounding term lies in the lower or in the upper part.
+  const lowRounding = fractionBits > 0 && fractionBits <= 32 ? powerOfTwo(fractionBits - 1) : 0;
+  const highRounding = fractionBits > 32 ? powerOfTwo(fractionBits - 33) : 0;
+  const unit = powerOfTwo(fractionBits);
+  const highUnit = powerOfTwo(fractionBits - 32);
+  return (inputs) => {
+    const { high, low } = sums(inputs);
+    const output = new Float64Array(high.length);
+    let outputOverflows = 0;
+    for (let n = 0; n < output.length; n++) {
+      const value =
+        fractionBits <= 32
+          ? high[n] / highUnit + Math.floor((low[n] + lowRounding) / unit)
+          : Math.floor((high[n] + highRounding) / highUnit);
+      if (value > word.max || value < word.min) outputOverflows++;
+      output[n] = intoWord(value, word);
+    }
+    return { output, accumulatorOverflows: 0, outputOverflows };
   };
 }
 

@@ -4,7 +4,6 @@ import { type ExactSums, exactSums } from './exactSums';
 export type WideSums = (inputs: readonly Float64Array[]) => bigint[];
 
 const limb = 65536;
-const limbBits = 16n;
 
 /** The upper part of whole numbers, `floor(v / 2^16)`, and what is left, 0..65535. */
 function split(rows: readonly Float64Array[]): [Float64Array[], Float64Array[]] {
@@ -12,24 +11,42 @@ function split(rows: readonly Float64Array[]): [Float64Array[], Float64Array[]] 
   return [high, rows.map((row, r) => row.map((v, k) => v - limb * high[r][k]))];
 }
 
+/** A sum as `high · 2^32 + low`, 0 ≤ low < 2^32, both exact. */
+export interface SplitSums {
+  high: Float64Array;
+  low: Float64Array;
+}
+
 /**
- * Exact sums of products of words of up to 32 bits: both factors are split at 16 bits, the four sums of partial products
- * are exact in doubles (below 2^53 up to 2^21 products), and only their total needs big integers.
+ * Exact sums of products of words of up to 32 bits: both factors are split at 16 bits, and the four sums of partial
+ * products are exact in doubles (below 2^53 up to 2^20 products), as are their carries.
  */
-export function wideSums(values: readonly Float64Array[]): WideSums {
+export function splitSums(values: readonly Float64Array[]): (inputs: readonly Float64Array[]) => SplitSums {
   const [highTaps, lowTaps] = split(values);
   const ofHigh: ExactSums = exactSums(highTaps, limb);
   const ofLow: ExactSums = exactSums(lowTaps, limb);
   return (inputs) => {
-    const [high, low] = split(inputs);
-    const highHigh = ofHigh(high);
-    const highLow = ofHigh(low);
-    const lowHigh = ofLow(high);
-    const lowLow = ofLow(low);
-    return Array.from(highHigh, (top, n) => {
-      // The middle sums stay below 2^53 together, each being below 2^52.
-      const upper = (BigInt(top) << limbBits) + BigInt(highLow[n] + lowHigh[n]);
-      return (upper << limbBits) + BigInt(lowLow[n]);
-    });
+    const [highInputs, lowInputs] = split(inputs);
+    const high = ofHigh(highInputs);
+    const highLow = ofHigh(lowInputs);
+    const lowHigh = ofLow(highInputs);
+    const low = ofLow(lowInputs);
+    for (let n = 0; n < high.length; n++) {
+      const carry = Math.floor(low[n] / limb);
+      const middle = highLow[n] + lowHigh[n] + carry;
+      const upper = Math.floor(middle / limb);
+      low[n] = low[n] - limb * carry + limb * (middle - limb * upper);
+      high[n] += upper;
+    }
+    return { high, low };
+  };
+}
+
+/** The same sums as big integers. */
+export function wideSums(values: readonly Float64Array[]): WideSums {
+  const sums = splitSums(values);
+  return (inputs) => {
+    const { high, low } = sums(inputs);
+    return Array.from(high, (top, n) => (BigInt(top) << 32n) + BigInt(low[n]));
   };
 }

@@ -1,4 +1,5 @@
 import type { IntegerFormat } from './scaling';
+import { type WordRange, wordRange } from './words';
 
 /** Extremes that the accumulator can reach with any input, and the two's-complement bits that hold them. */
 export interface WorstCase {
@@ -13,22 +14,38 @@ export interface WorstCase {
  * @param values integer coefficients, one row an input
  */
 export function worstCase(values: readonly Float64Array[], format: IntegerFormat): WorstCase {
-  const low = 1n << BigInt(format.inputWord - 1);
-  const high = low - 1n;
+  const range = wordRange(format.inputWord);
+  return accumulatorBound(
+    values,
+    format,
+    values.map(() => range),
+  );
+}
+
+/**
+ * The same for inputs that keep to a range each, such as the extremes of the recordings.
+ * @param ranges in counts, within the input word, one an input
+ */
+export function accumulatorBound(
+  values: readonly Float64Array[],
+  format: IntegerFormat,
+  ranges: readonly WordRange[],
+): WorstCase {
   const rounding = format.fractionBits > 0 ? 1n << BigInt(format.fractionBits - 1) : 0n;
-  let max = rounding;
-  let min = rounding;
-  // Before the rounding term is added the sum can be lower than after it.
-  let minBefore = 0n;
-  for (const row of values) {
+  let max = 0n;
+  let min = 0n;
+  values.forEach((row, r) => {
+    const low = BigInt(ranges[r].min);
+    const high = BigInt(ranges[r].max);
     for (const value of row) {
       const v = BigInt(value);
-      max += v > 0n ? v * high : -v * low;
-      min -= v > 0n ? v * low : -v * high;
-      minBefore -= v > 0n ? v * low : -v * high;
+      max += v > 0n ? v * high : v * low;
+      min += v > 0n ? v * low : v * high;
     }
-  }
-  return { min, max, bits: Math.max(bitsFor(minBefore), bitsFor(max)) };
+  });
+  // Before the rounding term is added the sum can be lower than after it.
+  const bits = Math.max(bitsFor(min), bitsFor(max + rounding));
+  return { min: min + rounding, max: max + rounding, bits };
 }
 
 /** Two's-complement bits that hold a whole number. */

@@ -11,6 +11,7 @@ import { type Fit, fitPair } from './fitPair';
 import type { Host } from './host';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
 import { targetFormat, targetScaling } from './targetFormat';
+import type { Target } from './toTarget';
 
 /** What a check came to. */
 export interface Checked {
@@ -145,13 +146,15 @@ function compareTaps({ filter, solution }: Fit, taps: TapsFile, file: string): F
   ];
 }
 
-function writtenTarget(pairing: Pairing, fit: Fit, taps: TapsFile): TargetFilter {
+/** The written integers; without a rounder, so that no other words are tried. */
+function writtenTarget(pairing: Pairing, fit: Fit, taps: TapsFile): Target {
   const { word, fractionBits, values } = taps.arithmetic;
-  return {
+  const filter: TargetFilter = {
     values,
     scaling: targetScaling(pairing, fit.filter.means),
     format: typeof word === 'string' ? word : targetFormat(pairing.document.arithmetic, fractionBits ?? 0),
   };
+  return { filter, rounder: null };
 }
 
 /** Shown figures must agree to their last shown digit, give or take one. */

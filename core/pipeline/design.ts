@@ -13,8 +13,10 @@ import type { DesignResult } from './designResult';
 import { type Fit, fitPair } from './fitPair';
 import type { Host } from './host';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
+import { gainFindings, shapeResult } from './shapeResult';
+import { studyWords } from './studyWords';
 import { recordingSummaries, takeSummaries } from './summaries';
-import { toTarget } from './toTarget';
+import { type Target, toTarget } from './toTarget';
 
 /** A design, or the findings that stopped it (and those found on the way), worst first. */
 export interface Designed {
@@ -51,7 +53,7 @@ export async function evaluateDesign(
   pairing: Pairing,
   place: DocumentPlace,
   fit: Fit,
-  target: TargetFilter,
+  target: Target,
   earlier: readonly Finding[],
 ): Promise<DesignResult> {
   const { document, takes, sampleRate } = pairing;
@@ -60,12 +62,14 @@ export async function evaluateDesign(
   const heldOut = heldOutRuns(takes, document.job, filter);
   const proved = heldOut.runs.length > 0;
   const runs = proved ? heldOut.runs : runsOver(takes, (take) => take.fit, filter);
-  const evaluation = await evaluate(runs, filter, target, sampleRate, host.pace);
+  const evaluation = await evaluate(runs, filter, target.filter, sampleRate, host.pace);
+  const shape = await shapeResult(pairing, fit, target.filter, runs, evaluation.total.nmseDb, host.pace);
   const trustworthy = document.job !== 'cancel' || heldOut.disturbanceOnly;
   const findings = [
     ...earlier,
     ...proofFindings(pairing, fit, heldOut),
-    ...overflowFindings(target, evaluation.target),
+    ...overflowFindings(target.filter, evaluation.target),
+    ...gainFindings(pairing, shape),
     ...checkLimits(document.limits, {
       takes: proved ? evaluation.takes : null,
       target: proved ? evaluation.target : null,
@@ -96,8 +100,10 @@ export async function evaluateDesign(
         }
       : null,
     spectra: evaluation.spectra,
-    arithmetic: arithmeticResult(target, evaluation.target),
-    vectors: await vectorsFrom(runs, pairing, fit, target),
+    arithmetic: arithmeticResult(target.filter, evaluation.target, pairing),
+    shape,
+    words: await studyWords(fit, target, runs, host.pace),
+    vectors: await vectorsFrom(runs, pairing, fit, target.filter),
     findings: worstFirst(findings),
   };
 }

@@ -4,8 +4,10 @@ import type { ErrorFigure } from '../evaluation/fitFigure';
 import type { SpectraFigures, TakeFigure } from '../evaluation/heldOutFigures';
 import type { Finding } from '../findings/finding';
 import type { TestVectors } from '../numbers/testVectors';
+import type { WorstCase } from '../numbers/worstCase';
 import type { Interval } from '../pair/intervals';
 import type { Levels } from '../recordings/levels';
+import type { WordStudy } from './studyWords';
 
 export type { BandFigure, ErrorFigure, Interval, SpectraFigures, TakeFigure, TestVectors };
 
@@ -56,7 +58,9 @@ export interface ArithmeticResult {
   /** The desired mean in output counts, for the jobs that add it back to y. */
   desiredMeanCounts: number;
   /** Worst case of the accumulator, the rounding term included, and the bits it needs; null for float words. */
-  worstCase: { min: bigint; max: bigint; bits: number } | null;
+  worstCase: WorstCase | null;
+  /** The same for inputs that keep to the extremes of the recordings. */
+  recordedCase: WorstCase | null;
   /** Bit-true run over the held-out n (the fit's where nothing is held out); null where it could not be run. */
   heldOutNmseDb: number | null;
   quantisationLossDb: number | null;
@@ -65,6 +69,14 @@ export interface ArithmeticResult {
   accumulatorOverflows: number;
   outputOverflows: number;
   samples: number;
+}
+
+/** What the document asks of the taps' shape, and what it costs. */
+export interface ShapeResult {
+  /** The gain of the taps and of the target's at the fixed frequency: in phase and, where it is held too, in quadrature. */
+  gain: { asked: number; taps: number[]; target: number[] } | null;
+  /** Held-out NMSE (the fit's where nothing is held out) without it, and the rise that it costs, in dB. */
+  prices: { without: 'shape' | 'gain'; nmseDb: number; priceDb: number }[];
 }
 
 /** Everything a design found; the texts of the files are made from this alone. */
@@ -85,12 +97,16 @@ export interface DesignResult {
   means: { inputs: number[]; desired: number };
   /** Mean square of each input over the fit intervals, after mean removal. */
   inputPowers: number[];
-  method: 'levinson' | 'cholesky';
+  method: 'levinson' | 'schur' | 'cholesky';
   conditionNumber: number;
   fit: ErrorFigure;
   heldOut: HeldOutFigures | null;
   spectra: SpectraFigures;
   arithmetic: ArithmeticResult;
+  /** Null where the taps are free. */
+  shape: ShapeResult | null;
+  /** Null where the target computes in floats, or where it was not asked for. */
+  words: WordStudy | null;
   vectors: TestVectors;
   /** Worst first. */
   findings: Finding[];

@@ -2,6 +2,8 @@ import type { Filter } from '../evaluation/filter';
 import { finding, Refusal } from '../findings/finding';
 import type { Pace } from '../pace';
 import { type Moments, measureMoments } from '../pair/moments';
+import { type Fold, foldSystem, newFold, unfold } from '../solvers/fold';
+import { type GainConditions, gainConditions, holdConditions } from '../solvers/fixedGain';
 import { type NormalSystem, normalSystem } from '../solvers/normalSystem';
 import { type Solution, solve, type Unsolvable } from '../solvers/solve';
 import { gatherSums } from '../statistics/gatherSums';
@@ -11,9 +13,16 @@ import type { Pairing } from './pairing';
 /** The minimum-mean-squared-error filter of a pairing and what led to it. */
 export interface Fit {
   filter: Filter;
+  /** The taps that the symmetry leaves free, one row an input; all taps where there is none. */
+  free: Float64Array[];
+  fold: Fold;
+  gain: GainConditions | null;
   moments: Moments;
+  /** Of the free taps. */
   system: NormalSystem;
   solution: Solution;
+  /** The filter without what the document asks of its shape, for the price: without any of it, without the gain alone. */
+  unshaped: { without: 'shape' | 'gain'; filter: Filter }[];
 }
 
 /**
@@ -27,15 +36,59 @@ export async function fitPair(pairing: Pairing, pace: Pace): Promise<Fit> {
   const moments = await measureMoments(takes, document.prepare.removeMean, pace);
   refuseIfAny(checkSilence(takes, moments));
   const sums = await gatherSums(takes, { length, delay, windowing }, moments.means, pace);
-  const system = normalSystem(sums, moments.inputPowers);
+  const whole = normalSystem(sums, moments.inputPowers);
+  const fold = newFold(length, document.filter.symmetry);
+  const system = foldSystem(whole, sums.inputs, fold);
   const solution = solve(system, sums.inputs, regularisation);
   if ('smallestRegularisation' in solution) throw new Refusal([unsolvable(solution, regularisation)]);
-  return {
-    filter: { coefficients: solution.coefficients, delay, means: moments.means },
-    moments,
-    system,
-    solution,
-  };
+  const gain = askedGain(pairing, fold);
+  const free = gain === null ? solution.coefficients : held(pairing, system, solution, gain);
+  const filterOf = (taps: readonly Float64Array[]): Filter => ({
+    coefficients: unfold(fold, taps),
+    delay,
+    means: moments.means,
+  });
+  const unshaped: Fit['unshaped'] = [];
+  if (gain !== null) unshaped.push({ without: 'gain', filter: filterOf(solution.coefficients) });
+  if (fold.symmetry !== 'none') {
+    const freest = solve(whole, sums.inputs, regularisation);
+    if ('coefficients' in freest) {
+      const { coefficients } = freest;
+      unshaped.push({ without: 'shape', filter: { coefficients, delay, means: moments.means } });
+    }
+  }
+  return { filter: filterOf(free), free, fold, gain, moments, system, solution, unshaped };
+}
+
+/** The conditions of the document's fixed gain; null where it asks for none. */
+function askedGain({ document, sampleRate }: Pairing, fold: Fold): GainConditions | null {
+  const { fixedGain, delay } = document.filter;
+  if (fixedGain === null) return null;
+  const { frequency, gain } = fixedGain;
+  const path = ['filter', 'fixedGain', 'frequency'];
+  if (frequency > sampleRate / 2) {
+    throw new Refusal([finding('gain-frequency', { frequency, limit: sampleRate / 2 }, { path })]);
+  }
+  const conditions = gainConditions(fold, frequency / sampleRate, gain, delay);
+  if (conditions === null) throw new Refusal([finding('gain-unreachable', { frequency }, { path })]);
+  return conditions;
+}
+
+function held(
+  { document }: Pairing,
+  system: NormalSystem,
+  solution: Solution,
+  gain: GainConditions,
+): Float64Array[] {
+  const { fixedGain, regularisation } = document.filter;
+  const { coefficients } = solution;
+  return holdConditions(coefficients, (fixedGain?.input ?? 1) - 1, gain, (column) => {
+    const flat = column.flatMap((row) => Array.from(row));
+    const right = Float64Array.from(flat, (value, i) => value / system.scale[i]);
+    const solved = solve({ ...system, right }, coefficients.length, regularisation);
+    if ('smallestRegularisation' in solved) throw new Error('a system was solved once and not a second time');
+    return solved.coefficients;
+  });
 }
 
 function refuseIfAny(findings: Refusal['findings']): void {

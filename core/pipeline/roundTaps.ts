@@ -1,46 +1,84 @@
-import { roundErrorAware } from '../numbers/errorAwareRounding';
-import type { Scaling } from '../numbers/scaling';
-import { powerOfTwo } from '../numbers/words';
+import type { Rounding } from '../document/pairingDocument';
+import { type RoundingCost, roundErrorAware } from '../numbers/errorAwareRounding';
+import { type HeldSum, holdSum } from '../numbers/heldSum';
+import { scaledCoefficients, type Scaling } from '../numbers/scaling';
+import { clamp, powerOfTwo, roundHalfUp, type WordRange, wordRange } from '../numbers/words';
 import { factorCholesky } from '../solvers/cholesky';
+import { unfold } from '../solvers/fold';
 import { elementsOf, type NormalSystem } from '../solvers/normalSystem';
 import type { Fit } from './fitPair';
 
 /** Unknowns up to which a factor is computed for the rounding where the solver has none. */
 const mostToFactor = 2048;
 
+/** Rounds the firmware's coefficients to integers of a word; what is dear to compute is kept between calls. */
+export type TapRounder = (fractionBits: number, word: number, rounding: Rounding) => Float64Array[];
+
 /**
- * Error-aware rounding of the firmware's coefficients. With `A` the regularised normal matrix made free of units, one
- * step of coefficient i moves the solution by u_i = √P_r · (q_out / q_in,r) · 2^-F, so that the cost matrix is `U A U`.
- * @param scaled coefficients in output counts per input count, one row an input
- * @returns integers, one row an input
+ * A rounder of the taps of a fit. With `A` the regularised normal matrix made free of units, one step of coefficient i
+ * moves the solution by u_i = √P_r · (q_out / q_in,r) · 2^-F, so that the cost matrix of error-aware rounding is `U A U`.
+ * Of symmetric taps the free ones are rounded, with the folded matrix; a gain fixed at 0 Hz (or half the rate) is that of
+ * the integers exactly where their word and symmetry allow it.
+ * @returns integers, one row an input, newest-first
  */
-export function roundTaps(
-  fit: Fit,
-  regularisation: number,
-  scaled: readonly Float64Array[],
-  scaling: Scaling,
-  fractionBits: number,
-  word: number,
-): Float64Array[] {
+export function tapRounder(fit: Fit, regularisation: number, scaling: Scaling, input: number): TapRounder {
   const { size, scale } = fit.system;
-  const length = size / scaled.length;
-  const step = powerOfTwo(fractionBits);
-  const units = new Float64Array(size);
-  const targets = new Float64Array(size);
-  for (let i = 0; i < size; i++) {
-    const r = Math.floor(i / length);
-    units[i] = (scale[i] * scaling.outputCount) / (scaling.inputCount[r] * step);
-    targets[i] = scaled[r][i - r * length] * step;
-  }
+  const scaled = scaledCoefficients(fit.free, scaling);
+  const length = fit.fold.free;
   const bare = elementsOf(fit.system, regularisation);
-  const factor = fit.solution.factor?.factor ?? factorOf(fit.system, bare);
-  const cost = {
-    size,
-    element: (i: number, j: number) => units[i] * units[j] * bare(i, j),
-    factor: factor === null ? null : factor.map((value, at) => value * units[Math.floor(at / size)]),
+  let factor: Float64Array | null | undefined;
+  return (fractionBits, word, rounding) => {
+    const step = powerOfTwo(fractionBits);
+    const targets = new Float64Array(size);
+    scaled.forEach((row, r) => {
+      row.forEach((c, k) => {
+        targets[r * length + k] = c * step;
+      });
+    });
+    const range = tapRange(word, fit);
+    const units = scale.map((s, i) => {
+      const r = Math.floor(i / length);
+      return (s * scaling.outputCount) / (scaling.inputCount[r] * step);
+    });
+    const aware = rounding === 'error-aware';
+    if (aware && factor === undefined) factor = fit.solution.factor?.factor ?? factorOf(fit.system, bare);
+    const cost: RoundingCost = {
+      size,
+      element: aware ? (i, j) => units[i] * units[j] * bare(i, j) : (i, j) => (i === j ? 1 : 0),
+      factor: aware && factor ? factor.map((value, at) => value * units[Math.floor(at / size)]) : null,
+    };
+    const values = aware
+      ? roundErrorAware(targets, cost, range)
+      : targets.map((value) => clamp(roundHalfUp(value) + 0, range));
+    const held = heldSum(fit, scaling, input, step);
+    if (held !== null) {
+      const moved = values.slice();
+      if (holdSum(moved, targets, cost, range, held)) values.set(moved);
+    }
+    return unfold(
+      fit.fold,
+      scaled.map((_, r) => values.slice(r * length, (r + 1) * length)),
+    );
   };
-  const values = roundErrorAware(targets, cost, word);
-  return scaled.map((_, r) => values.slice(r * length, (r + 1) * length));
+}
+
+/** Antisymmetric taps need their negatives too. */
+export function tapRange(word: number, { fold }: Fit): WordRange {
+  const range = wordRange(word);
+  return fold.symmetry === 'odd' ? { min: -range.max, max: range.max } : range;
+}
+
+/** The sum that a fixed gain asks of the integers, where it is a sum of whole multiples of them. */
+function heldSum({ gain, fold, free }: Fit, scaling: Scaling, input: number, step: number): HeldSum | null {
+  if (gain === null || gain.columns.length !== 1) return null;
+  const weights = new Float64Array(free.length * fold.free);
+  for (let a = 0; a < fold.free; a++) {
+    const weight = Math.round(gain.columns[0][a]);
+    if (Math.abs(weight - gain.columns[0][a]) > 1e-9) return null;
+    weights[input * fold.free + a] = weight;
+  }
+  const counts = (gain.values[0] * scaling.inputCount[input]) / scaling.outputCount;
+  return { weights, total: roundHalfUp(counts * step) };
 }
 
 function factorOf({ size }: NormalSystem, element: (i: number, j: number) => number): Float64Array | null {

@@ -1,52 +1,49 @@
 import { finding, Refusal } from '../findings/finding';
-import { fits, fittingFractionBits, roundToNearest } from '../numbers/fractionBits';
+import { fits, fittingFractionBits } from '../numbers/fractionBits';
 import { isFloat, scaledCoefficients } from '../numbers/scaling';
 import type { TargetFilter } from '../numbers/targetFilter';
 import { powerOfTwo, wordRange } from '../numbers/words';
 import type { Fit } from './fitPair';
 import type { Pairing } from './pairing';
-import { roundTaps } from './roundTaps';
+import { type TapRounder, tapRange, tapRounder } from './roundTaps';
 import { targetFormat, targetScaling } from './targetFormat';
+
+/** The solution in the numbers of the target, and the rounder that made them, for other words. */
+export interface Target {
+  filter: TargetFilter;
+  /** Null for float words. */
+  rounder: TapRounder | null;
+}
 
 /**
  * Turns the solution into the numbers of the target.
  * @throws Refusal `coefficient-too-large` where no number of fraction bits lets the coefficients fit
  */
-export function toTarget(pairing: Pairing, fit: Fit): TargetFilter {
-  const { arithmetic } = pairing.document;
-  const { coefficients, means } = fit.filter;
-  if (isFloat(arithmetic.word)) {
-    const round = arithmetic.word === 'float32' ? Math.fround : (value: number) => value;
-    return {
-      values: coefficients.map((row) => row.map(round)),
-      scaling: targetScaling(pairing, means),
-      format: arithmetic.word,
-    };
+export function toTarget(pairing: Pairing, fit: Fit): Target {
+  const { arithmetic, filter } = pairing.document;
+  const scaling = targetScaling(pairing, fit.filter.means);
+  const { word } = arithmetic;
+  if (isFloat(word)) {
+    const round = word === 'float32' ? Math.fround : (value: number) => value;
+    const values = fit.filter.coefficients.map((row) => row.map(round));
+    return { filter: { values, scaling, format: word }, rounder: null };
   }
-  const scaling = targetScaling(pairing, means);
-  const scaled = scaledCoefficients(coefficients, scaling);
-  const fractionBits = chooseFractionBits(pairing, scaled, arithmetic.word);
-  return {
-    values:
-      arithmetic.rounding === 'error-aware'
-        ? roundTaps(
-            fit,
-            pairing.document.filter.regularisation,
-            scaled,
-            scaling,
-            fractionBits,
-            arithmetic.word,
-          )
-        : roundToNearest(scaled, fractionBits),
-    scaling,
-    format: targetFormat(arithmetic, fractionBits),
-  };
+  const rounder = tapRounder(fit, filter.regularisation, scaling, (filter.fixedGain?.input ?? 1) - 1);
+  const fractionBits = chooseFractionBits(pairing, fit, scaledCoefficients(fit.free, scaling), word);
+  const values = rounder(fractionBits, word, arithmetic.rounding);
+  return { filter: { values, scaling, format: targetFormat(arithmetic, fractionBits) }, rounder };
 }
 
-function chooseFractionBits(pairing: Pairing, scaled: readonly Float64Array[], word: number): number {
+function chooseFractionBits(
+  pairing: Pairing,
+  fit: Fit,
+  scaled: readonly Float64Array[],
+  word: number,
+): number {
   const { fractionBits, accumulator } = pairing.document.arithmetic;
-  const fitting = fittingFractionBits(scaled, word, accumulator);
-  if (fitting !== null && (fractionBits === null || fits(scaled, word, fractionBits))) {
+  const range = tapRange(word, fit);
+  const fitting = fittingFractionBits(scaled, range, accumulator);
+  if (fitting !== null && (fractionBits === null || fits(scaled, range, fractionBits))) {
     return fractionBits ?? fitting;
   }
   const tried = fractionBits ?? 0;

@@ -34,6 +34,7 @@ export interface SampleOptions {
   order?: Order;
   languages?: Language[];
   vectors?: number;
+  attributes?: PairingDocument['write']['attributes'];
   heldOut?: 'none' | 'all' | 'disturbance only';
   symbol?: string;
   folder?: string;
@@ -63,6 +64,9 @@ export function sampleResult(options: SampleOptions = {}): DesignResult {
   const input = labels.map((_, r) => excitation(document, r));
   const means = { inputs: labels.map((_, r) => 0.25 - 0.5 * r), desired: 12.5 };
   const used = document.prepare.removeMean ? means : { inputs: labels.map(() => 0), desired: 0 };
+  const count = document.write.testVectors;
+  const parts: DesignResult['vectors']['parts'] =
+    count === 0 ? [] : [{ part: 'excerpt', input: null, from: 0, to: count }];
   const run = exactFilter({ values, fractionBits, input, document });
   return {
     document,
@@ -123,6 +127,7 @@ export function sampleResult(options: SampleOptions = {}): DesignResult {
       ),
       desiredMeanCounts: integers ? Math.floor(used.desired / outputCount + 0.5) : Math.fround(used.desired),
       worstCase: run.worstCase,
+      recordedCase: run.worstCase,
       heldOutNmseDb: -30.817,
       quantisationLossDb: 0.0132,
       outputErrorDb: -71.046,
@@ -130,8 +135,28 @@ export function sampleResult(options: SampleOptions = {}): DesignResult {
       outputOverflows: 0,
       samples: { none: 79937, all: 40000, 'disturbance only': 20000 }[options.heldOut ?? 'disturbance only'],
     },
-    vectors: { input, expected: run.output },
+    shape: null,
+    words: integers ? sampleStudy() : null,
+    vectors: { input, expected: run.output, parts },
     findings: findings(document, options.heldOut ?? 'disturbance only'),
+  };
+}
+
+function sampleStudy(): NonNullable<DesignResult['words']> {
+  const figures = (loss: number) => ({
+    nmseDb: -30.83 + loss,
+    quantisationLossDb: loss,
+    outputErrorDb: -71 + loss,
+  });
+  return {
+    samples: 20000,
+    words: [
+      { word: 8, rounding: 'nearest', fractionBits: 7, accumulatorBits: 26, ...figures(3.21) },
+      { word: 8, rounding: 'error-aware', fractionBits: 7, accumulatorBits: 26, ...figures(0.87) },
+      { word: 16, rounding: 'nearest', fractionBits: 15, accumulatorBits: 34, ...figures(0.02) },
+      { word: 16, rounding: 'error-aware', fractionBits: 15, accumulatorBits: 34, ...figures(0.01) },
+    ],
+    shares: { input: figures(0.003), taps: figures(0.004), output: figures(0.006) },
   };
 }
 
@@ -162,6 +187,8 @@ function sampleDocument(options: SampleOptions): PairingDocument {
       delay: options.delay ?? 0,
       regularisation: 1e-4,
       windowing: 'covariance',
+      symmetry: 'none',
+      fixedGain: null,
     },
     arithmetic: {
       word,
@@ -172,6 +199,7 @@ function sampleDocument(options: SampleOptions): PairingDocument {
       overflow: options.overflow ?? 'saturate',
       input: signal(options.inputWord, inputFullScale),
       output: signal(options.outputWord, outputFullScale),
+      cyclesPerMac: 1,
     },
     write: {
       folder: options.folder ?? 'generated',
@@ -179,6 +207,7 @@ function sampleDocument(options: SampleOptions): PairingDocument {
       languages: options.languages ?? ['c'],
       order: options.order ?? 'newest-first',
       testVectors: options.vectors ?? 256,
+      attributes: options.attributes ?? { cBefore: '', cAfter: '', rust: '' },
     },
     limits: { heldOutNmse: -20, quantisationLoss: 0.1 },
   };

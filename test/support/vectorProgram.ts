@@ -92,3 +92,26 @@ int main(void)
 }
 `;
 }
+
+/** Streams the vectors through the reference source. */
+export const referenceProgram = (inputType: string) => `
+#include <stdio.h>
+#include "belt_filter.h"
+#include "belt_taps.h"
+#include "belt_vectors.h"
+
+int main(void)
+{
+    belt_state state;
+    int n, r, wrong = 0;
+    belt_reset(&state);
+    for (n = 0; n < BELT_VECTOR_SAMPLES; n++) {
+        ${inputType} x[BELT_INPUTS];
+        for (r = 0; r < BELT_INPUTS; r++) x[r] = belt_input[r * BELT_VECTOR_SAMPLES + n];
+        if (belt_step(&state, x) != belt_expected[n]) wrong++;
+    }
+    (void)belt_taps;
+    printf("%d wrong\\n", wrong);
+    return wrong != 0;
+}
+`;

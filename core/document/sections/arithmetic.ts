@@ -1,13 +1,16 @@
 import type { Check } from '../checks/check';
 import { orNull } from '../checks/check';
 import type { Keys } from '../checks/keys';
-import { wholeIn } from '../checks/numbers';
+import { positiveUpTo, wholeIn } from '../checks/numbers';
 import { oneOf } from '../checks/texts';
 import { overflows, type PairingDocument, roundings, type Word } from '../pairingDocument';
 import { signalWord } from './signalWord';
 
 /** Words that coefficients can have. */
 const coefficientWords = [8, 12, 16, 24, 32, 'float32', 'float64'] as const;
+
+/** Cycles of a multiply-accumulate at most; software floats take some hundreds. */
+const mostCycles = 1e6;
 
 const word: Check<Word> = oneOf(coefficientWords);
 
@@ -33,6 +36,7 @@ export function arithmetic(inputs: number | null): (keys: Keys) => PairingDocume
       overflow: keys.optional('overflow', oneOf(overflows), 'saturate'),
       input: keys.section('input', signalWord(coefficients, inputs)),
       output: keys.section('output', signalWord(coefficients, 1)),
+      cyclesPerMac: keys.optional('cyclesPerMac', positiveUpTo(mostCycles), 1),
     };
   };
 }

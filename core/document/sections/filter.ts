@@ -1,7 +1,9 @@
+import { orNull } from '../checks/check';
 import type { Keys } from '../checks/keys';
 import { numberIn, wholeIn } from '../checks/numbers';
 import { oneOf } from '../checks/texts';
-import { type Job, type PairingDocument, windowings } from '../pairingDocument';
+import { type Job, type PairingDocument, symmetries, windowings } from '../pairingDocument';
+import { fixedGain } from './fixedGain';
 
 /** Taps of one input at most. */
 const longestFilter = 65_536;
@@ -12,11 +14,14 @@ const longestDelay = 1e9;
 /** Regularisation at most; far below it the taps are nought already. */
 const strongestRegularisation = 1e6;
 
-/** The filter's length, delay and how it is fitted. */
-export function filter(job: Job): (keys: Keys) => PairingDocument['filter'] {
+/**
+ * The filter's length, delay, how it is fitted and what shape its taps have.
+ * @param inputs of each take; null where the takes do not tell
+ */
+export function filter(job: Job, inputs: number | null): (keys: Keys) => PairingDocument['filter'] {
   return (keys) => {
     const length = keys.optional('length', wholeIn(1, longestFilter), 64);
-    return {
+    const fitted = {
       length,
       delay: keys.optional('delay', wholeIn(-longestDelay, longestDelay), defaultDelay(job, length)),
       // For one input it keeps the condition number below a million times the length, so that the system can be
@@ -24,6 +29,10 @@ export function filter(job: Job): (keys: Keys) => PairingDocument['filter'] {
       regularisation: keys.optional('regularisation', numberIn(0, strongestRegularisation), 1e-6),
       windowing: keys.optional('windowing', oneOf(windowings), 'covariance'),
     };
+    const symmetry = keys.optional('symmetry', oneOf(symmetries), 'none');
+    if (symmetry === 'odd' && length === 1) keys.at.inside('symmetry').report('no-free-taps');
+    const held = keys.optional('fixedGain', orNull(fixedGain(inputs, symmetry)), null);
+    return { ...fitted, symmetry, fixedGain: held };
   };
 }
 

@@ -6,6 +6,7 @@ import { wholeIn } from '../checks/numbers';
 import { folderPath } from '../checks/relativePath';
 import { oneOf, text } from '../checks/texts';
 import { type Language, languages, orders, type PairingDocument } from '../pairingDocument';
+import { attributes } from './attributes';
 import { defaultSymbol, longestSymbol, symbolFault } from '../symbol';
 
 /** Samples of the test vectors at most. */
@@ -18,6 +19,7 @@ export function write(title: string): (keys: Keys) => PairingDocument['write'] {
     symbol: keys.optional('symbol', symbol, defaultSymbol(title)),
     languages: keys.optional('languages', languageSet, ['c']),
     order: keys.optional('order', oneOf(orders), 'newest-first'),
+    attributes: keys.section('attributes', attributes),
     testVectors: keys.optional('testVectors', wholeIn(0, longestVectors), 256),
   });
 }

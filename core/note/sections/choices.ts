@@ -11,7 +11,14 @@ export function choices(result: DesignResult): string {
   return section(
     'Length, delay, regularisation, windowing',
     'Chosen by the engineer in the pairing document; this note compares no alternatives. What the result says about each choice:',
-    bullets([length(result), delay(result), regularisation(result), windowing(result), preparation(result)]),
+    bullets([
+      length(result),
+      delay(result),
+      regularisation(result),
+      windowing(result),
+      preparation(result),
+      ...shape(result),
+    ]),
     shapes(result),
     advice(result),
   );
@@ -51,6 +58,12 @@ function delay({ document, sampleRate }: DesignResult): string {
     : `**Delay ${samples}.** A pure lag of ${time} is kept out of the filter: the input is delayed before it.`;
 }
 
+const solvers = {
+  levinson: 'the Levinson recursion',
+  schur: 'the generalised Schur algorithm',
+  cholesky: 'Cholesky factorisation',
+};
+
 function regularisation({ document, conditionNumber, method }: DesignResult): string {
   const rho = document.filter.regularisation;
   const value =
@@ -61,7 +74,7 @@ function regularisation({ document, conditionNumber, method }: DesignResult): st
   const left = Number.isFinite(conditionNumber)
     ? `Of the 16 digits of the arithmetic about ${Math.floor(digits)} are left in the coefficients.`
     : 'The coefficients are not determined by the data.';
-  const solver = method === 'levinson' ? 'the Levinson recursion' : 'Cholesky factorisation';
+  const solver = solvers[method];
   return `**Regularisation ${value}.** Condition number of the regularised normal matrix ${significant(conditionNumber, 2)}, solved by ${solver}. ${left}`;
 }
 
@@ -80,6 +93,34 @@ function preparation({ document, means, inputs, desired }: DesignResult): string
   return band === null
     ? `${mean} The error is not weighted to a band.`
     : `${mean} **Error weighted to ${frequency(band.from)} to ${frequency(band.to)};** NMSE is of the signals so weighted.`;
+}
+
+/** Symmetry and fixed gain, what came of them and what they cost. */
+function shape({ document, shape: found, heldOut, inputs }: DesignResult): string[] {
+  if (found === null) return [];
+  const { symmetry, fixedGain, length: taps } = document.filter;
+  const data = heldOut === null ? 'fit' : 'held-out';
+  const price = (without: 'shape' | 'gain') => {
+    const row = found.prices.find((entry) => entry.without === without);
+    return row === undefined
+      ? ''
+      : ` Without it the ${data} NMSE is ${decibels(row.nmseDb)}: its price is ${decibels(row.priceDb)}.`;
+  };
+  const lines: string[] = [];
+  if (symmetry !== 'none') {
+    const rule = symmetry === 'even' ? 'w[k] = w[M-1-k]' : 'w[k] = -w[M-1-k]';
+    const both = fixedGain === null ? '' : ' (together with the fixed gain)';
+    lines.push(
+      `**Symmetry ${code(symmetry)}**, ${code(rule)}: the delay is ${significant((taps - 1) / 2)} samples at every frequency.${price('shape').replace('its price', `its price${both}`)}`,
+    );
+  }
+  if (fixedGain !== null && found.gain !== null) {
+    const of = inputs.length === 1 ? '' : ` of input ${name(inputs[fixedGain.input - 1])}`;
+    lines.push(
+      `**Gain${of} fixed to ${significant(found.gain.asked, 7)} at ${frequency(fixedGain.frequency)}**; in the numbers of the target it is ${significant(found.gain.target[0], 9)}.${price('gain')}`,
+    );
+  }
+  return lines;
 }
 
 /** From as many taps on the share of an eighth says something. */

@@ -1,16 +1,20 @@
 import { counted, grouped, significant } from '../../figures/numbers';
 import { memory } from '../../figures/units';
-import { numberType, wordInWords } from '../../files/numberTypes';
+import { filterCost } from '../../files/filterCost';
+import { wordInWords } from '../../files/numberTypes';
 import { signalWords } from '../../files/signalWords';
 import type { DesignResult } from '../../pipeline/designResult';
 import { section, table } from '../markdown';
 
-/** What the filter costs the target: multiply-accumulates and memory. */
+/** What the filter costs the target: multiply-accumulates, cycles and memory. */
 export function cost(result: DesignResult): string {
-  const { document, inputs, sampleRate } = result;
-  const { word } = document.arithmetic;
+  const { document } = result;
+  const { word, cyclesPerMac } = document.arithmetic;
   const { input } = signalWords(document);
-  const products = document.filter.length * inputs.length;
+  const figures = filterCost(result);
+  const { delay, symmetry } = document.filter;
+  const lag = counted(Math.abs(delay), 'sample');
+  const signal = delay > 0 ? 'the desired signal' : 'the inputs';
   return section(
     'Cost',
     table(
@@ -18,28 +22,20 @@ export function cost(result: DesignResult): string {
       [
         [
           'multiply-accumulates',
-          `${grouped(products)} a sample, ${significant((products * sampleRate) / 1e6)} million a second (${wordInWords(word)} × ${wordInWords(input)})`,
+          `${grouped(figures.macsPerSample)} a sample, ${significant(figures.macsPerSecond / 1e6)} million a second (${wordInWords(word)} × ${wordInWords(input)})`,
         ],
-        ['coefficients', memory(products * numberType(word).bytes)],
-        ['input history', memory(products * numberType(input).bytes)],
-        ...delayLine(result),
+        [
+          `cycles of these, at ${counted(cyclesPerMac, 'cycle')} each`,
+          `${significant(figures.cyclesPerSample)} a sample, ${significant(figures.cyclesPerSecond / 1e6)} million a second`,
+        ],
+        ['coefficients', memory(figures.coefficientBytes)],
+        ['input history', memory(figures.stateBytes)],
+        ...(figures.delayBytes > 0 ? [[`delay of ${signal}, ${lag}`, memory(figures.delayBytes)]] : []),
       ],
     ),
-    'A straight loop over the taps is counted; a circular buffer or block processing may need more memory.',
+    'A straight loop over the taps is counted; a circular buffer or block processing may need more memory, and reading, scaling and rounding take cycles of their own.',
+    symmetry === 'none'
+      ? ''
+      : 'Mirrored taps share a multiplication: add (or subtract) the two samples first, which needs one more bit than a sample has, then multiply once. Without that the count is twice as high.',
   );
-}
-
-function delayLine({ document, inputs }: DesignResult): string[][] {
-  const { delay } = document.filter;
-  const { input, output } = signalWords(document);
-  if (delay > 0 && document.job === 'cancel') {
-    return [
-      [`delay of the desired signal, ${counted(delay, 'sample')}`, memory(delay * numberType(output).bytes)],
-    ];
-  }
-  if (delay < 0 && document.job !== 'predict') {
-    const bytes = -delay * inputs.length * numberType(input).bytes;
-    return [[`delay of the inputs, ${counted(-delay, 'sample')}`, memory(bytes)]];
-  }
-  return [];
 }

@@ -7,6 +7,7 @@ import { powerOfTwo, wordRange } from '../../numbers/words';
 import type { DesignResult } from '../../pipeline/designResult';
 import { name, section, table } from '../markdown';
 import { wantedSignalReminder } from '../wantedSignal';
+import { wordStudy } from '../wordStudy';
 
 /** The number format of the target, its room against overflow, and what it costs in accuracy. */
 export function numberFormat(result: DesignResult): string {
@@ -15,6 +16,7 @@ export function numberFormat(result: DesignResult): string {
     table(['what', 'value'], [...coefficients(result), ...accumulator(result), ...wordsOfSignals(result)]),
     lossIntroduction(result),
     table(['what', 'value'], loss(result), ['value']),
+    ...wordStudy(result),
     wantedSignalReminder(result),
   );
 }
@@ -43,8 +45,8 @@ function coefficients({ document, arithmetic }: DesignResult): string[][] {
 
 function accumulator({ document, arithmetic }: DesignResult): string[][] {
   const { accumulator: bits, accumulatorOverflow, overflow } = document.arithmetic;
-  const { worstCase } = arithmetic;
-  if (worstCase === null) return [];
+  const { worstCase, recordedCase } = arithmetic;
+  if (worstCase === null || recordedCase === null) return [];
   const room = bits - worstCase.bits;
   const verdict =
     room >= 0
@@ -54,6 +56,10 @@ function accumulator({ document, arithmetic }: DesignResult): string[][] {
     [
       'worst case of the accumulator',
       `${grouped(worstCase.min)} to ${grouped(worstCase.max)}, rounding term included: ${worstCase.bits} bits`,
+    ],
+    [
+      'the same for the extremes of the recordings',
+      `${grouped(recordedCase.min)} to ${grouped(recordedCase.max)}: ${recordedCase.bits} bits`,
     ],
     ['accumulator', `${bits} bits: ${verdict}`],
     ['output beyond its word', overflow === 'saturate' ? 'saturates' : 'wraps'],

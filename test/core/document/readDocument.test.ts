@@ -49,7 +49,14 @@ describe('a document in full', () => {
           },
         ],
         prepare: { removeMean: true, band: null },
-        filter: { length: 64, delay: 0, regularisation: 1e-4, windowing: 'covariance' },
+        filter: {
+          length: 64,
+          delay: 0,
+          regularisation: 1e-4,
+          windowing: 'covariance',
+          symmetry: 'none',
+          fixedGain: null,
+        },
         arithmetic: {
           word: 16,
           fractionBits: null,
@@ -59,6 +66,7 @@ describe('a document in full', () => {
           overflow: 'saturate',
           input: { word: 16, fullScale: [4, 4] },
           output: { word: 16, fullScale: [64] },
+          cyclesPerMac: 1,
         },
         write: {
           folder: 'generated',
@@ -66,6 +74,7 @@ describe('a document in full', () => {
           languages: ['c'],
           order: 'newest-first',
           testVectors: 256,
+          attributes: { cBefore: '', cAfter: '', rust: '' },
         },
         limits: { heldOutNmse: -20, quantisationLoss: 0.1 },
       },
@@ -90,7 +99,14 @@ describe('a document of the keys without defaults', () => {
         },
       ],
       prepare: { removeMean: true, band: null },
-      filter: { length: 64, delay: 0, regularisation: 1e-6, windowing: 'covariance' },
+      filter: {
+        length: 64,
+        delay: 0,
+        regularisation: 1e-6,
+        windowing: 'covariance',
+        symmetry: 'none',
+        fixedGain: null,
+      },
       arithmetic: {
         word: 16,
         fractionBits: null,
@@ -100,6 +116,7 @@ describe('a document of the keys without defaults', () => {
         overflow: 'saturate',
         input: { word: 16, fullScale: null },
         output: { word: 16, fullScale: null },
+        cyclesPerMac: 1,
       },
       write: {
         folder: 'generated',
@@ -107,6 +124,7 @@ describe('a document of the keys without defaults', () => {
         languages: ['c'],
         order: 'newest-first',
         testVectors: 256,
+        attributes: { cBefore: '', cAfter: '', rust: '' },
       },
       limits: { heldOutNmse: null, quantisationLoss: null },
     });
@@ -221,7 +239,7 @@ describe('unknown keys', () => {
       ].map((path) => `note unknown-key ${path}`),
     );
     expect(found.findings.map(say)).toContain(
-      'the key "regularization" is not known and changes nothing. Known here: length, delay, regularisation, windowing.',
+      'the key "regularization" is not known and changes nothing. Known here: length, delay, regularisation, windowing, symmetry, fixedGain.',
     );
   });
 

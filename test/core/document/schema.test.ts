@@ -59,7 +59,14 @@ const full = minimal({
     }),
   ],
   prepare: { removeMean: true, band: { from: 0, to: 1 } },
-  filter: { length: 1, delay: 0, regularisation: 0, windowing: 'covariance' },
+  filter: {
+    length: 1,
+    delay: 0,
+    regularisation: 0,
+    windowing: 'covariance',
+    symmetry: 'even',
+    fixedGain: { input: 1, frequency: 0, gain: 1 },
+  },
   arithmetic: {
     word: 8,
     fractionBits: 1,
@@ -69,8 +76,16 @@ const full = minimal({
     overflow: 'wrap',
     input: { word: 8, fullScale: [1] },
     output: { word: 8, fullScale: [1] },
+    cyclesPerMac: 1,
   },
-  write: { folder: 'x', symbol: 'x', languages: ['c'], order: 'newest-first', testVectors: 1 },
+  write: {
+    folder: 'x',
+    symbol: 'x',
+    languages: ['c'],
+    order: 'newest-first',
+    testVectors: 1,
+    attributes: { cBefore: '', cAfter: '', rust: '' },
+  },
   limits: { heldOutNmse: 0, quantisationLoss: 0 },
 });
 
@@ -112,12 +127,15 @@ describe('the defaults of the schema', () => {
     minimal({ takes: [{ inputs: [{ file: 'a.wav' }], desired: { file: 'a.wav' } }] }),
   );
   const interval = readClean(minimal({ takes: [take({ fit: [{ from: 0, to: 1 }] })] })).takes[0].fit![0];
+  const gain = { frequency: 1, gain: 2 };
+  const held = readClean(minimal({ filter: { fixedGain: gain } })).filter.fixedGain!;
   const found = keys.filter(({ schema: node }) => 'default' in node);
 
   it.each(found.map(({ path, schema: node }) => [path.join('.'), path, node.default]))(
     '%s',
     (_, path: (string | number)[], value) => {
       if (path.at(-1) === 'samples') expect(interval.samples).toBe(value);
+      else if (path[1] === 'fixedGain' && path.length > 2) expect(held.input).toBe(value);
       else expect(path.reduce<unknown>((at, key) => (at as Entry)[key], defaults)).toEqual(value);
     },
   );
@@ -135,6 +153,8 @@ describe('the defaults of the schema', () => {
       'takes.0.inputs',
       'takes.0.inputs.0.file',
       'takes.0.desired.file',
+      'filter.fixedGain.frequency',
+      'filter.fixedGain.gain',
       'write.symbol',
     ]);
   });
@@ -168,7 +188,17 @@ const values: unknown[] = [
     0, 1, -1, 0.5, 2, 7, 8, 16, 24, 32, 33, 62, 63, 64, 65, 1000, 65_536, 65_537, 1e6, 1e7, 1e9, -1e9, 1e10,
   ],
   ...[1e12, 1e13, 1e30, 1e31, 1e-300, 9007199254740991, 9007199254740992],
-  ...[[1], [0], [1, 1], ['c'], ['c', 'c'], ['c', 'rs', 'csv', 'npy'], ['go'], [{}], [{ from: 0, to: 1 }]],
+  ...[
+    [1],
+    [0],
+    [1, 1],
+    ['c'],
+    ['c', 'c'],
+    ['c', 'c-source', 'rs', 'csv', 'npy'],
+    ['go'],
+    [{}],
+    [{ from: 0, to: 1 }],
+  ],
   ...[
     { from: 0, to: 1 },
     { from: -1, to: 1 },
@@ -186,7 +216,14 @@ function changed(path: (string | number)[], value: unknown): Entry {
 }
 
 /** What the schema cannot say. */
-const beyondSchema = new Set(['fraction-bits-too-many', 'full-scale-count', 'range-empty', 'range-reversed']);
+const beyondSchema = new Set([
+  'fixed-gain-odd',
+  'fixed-gain-input',
+  'fraction-bits-too-many',
+  'full-scale-count',
+  'range-empty',
+  'range-reversed',
+]);
 
 function readerAccepts(document: Entry): boolean {
   return read(document).findings.every(

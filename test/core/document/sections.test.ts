@@ -209,6 +209,64 @@ describe('write', () => {
   });
 });
 
+describe('attributes', () => {
+  const attributes = (changes: Entry) => minimal({ write: { attributes: changes } });
+
+  it.each([
+    ['cBefore', '__attribute__((aligned(8)))'],
+    ['cBefore', '_Alignas(16)'],
+    ['cAfter', '__attribute__((section(".taps,"a"")))'.replaceAll('\\"', '')],
+    ['rust', '#[link_section = ".taps"] #[used]'],
+    ['rust', ''],
+  ])('%s: %s', (key, value) => {
+    expect(readClean(attributes({ [key]: value })).write.attributes).toMatchObject({ [key]: value });
+  });
+
+  it.each([
+    ['cBefore', '= { 0 }; int x'],
+    ['cBefore', '/* open'],
+    ['cAfter', '// rest'],
+    ['cAfter', 'a\\'],
+    ['cAfter', 'a\n#define x'],
+    ['cAfter', '((unbalanced)'],
+    ['cAfter', '(crossed[)]'],
+    ['cAfter', '"open'],
+    ['cAfter', '??/'],
+    ['cAfter', 'ü'],
+    ['rust', 'link_section'],
+    ['rust', '#[a] pub'],
+    ['rust', '#[doc = "]"] x'],
+  ])('%s refuses %j, which could be code', (key, value) => {
+    expect(problems(attributes({ [key]: value }))).toEqual([`attribute-form at write.attributes.${key}`]);
+  });
+});
+
+describe('shape', () => {
+  const filter = (changes: Entry) => minimal({ filter: changes });
+
+  it('has a symmetry and a fixed gain of the first input', () => {
+    const { symmetry, fixedGain } = readClean(
+      filter({ symmetry: 'even', fixedGain: { frequency: 0, gain: 1 } }),
+    ).filter;
+    expect(symmetry).toBe('even');
+    expect(fixedGain).toEqual({ input: 1, frequency: 0, gain: 1 });
+  });
+
+  it('refuses what cannot be', () => {
+    const gain = { frequency: 0, gain: 1 };
+    expect(problems(filter({ symmetry: 'odd', fixedGain: gain }))).toEqual([
+      'fixed-gain-odd at filter.fixedGain',
+    ]);
+    expect(problems(filter({ symmetry: 'odd', length: 1 }))).toEqual(['no-free-taps at filter.symmetry']);
+    expect(problems(filter({ fixedGain: { ...gain, input: 2 } }))).toEqual([
+      'fixed-gain-input at filter.fixedGain.input',
+    ]);
+    expect(problems(filter({ fixedGain: { gain: 1 } }))).toEqual([
+      'missing-key at filter.fixedGain.frequency',
+    ]);
+  });
+});
+
 describe('limits', () => {
   it('are numbers or none', () => {
     expect(readClean(minimal({ limits: { heldOutNmse: -20.5, quantisationLoss: null } })).limits).toEqual({

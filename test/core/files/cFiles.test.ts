@@ -3,12 +3,15 @@ import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { cFilterHeader, cFilterSource } from '../../../core/files/cFilter';
 import { cTaps } from '../../../core/files/cTaps';
 import { cVectors } from '../../../core/files/cVectors';
+import { numberType } from '../../../core/files/numberTypes';
+import { signalWords } from '../../../core/files/signalWords';
 import { hostileNames } from '../../support/hostileNames';
 import { needs } from '../../support/programs';
 import { type SampleOptions, sampleResult } from '../../support/sampleResult';
-import { floatProgram, integerProgram } from '../../support/vectorProgram';
+import { floatProgram, integerProgram, referenceProgram } from '../../support/vectorProgram';
 
 const mark = { document: 'belt.pairing.json', digest: 'a'.repeat(64) };
 
@@ -70,6 +73,62 @@ describe.skipIf(!needs('gcc'))('the C headers in a C99 program (gcc)', () => {
 
   it.each(hostileNames)('compile with every name being %j', (hostile) => {
     expect(run(allNamed(hostile), integerProgram, 'gcc')).toMatch(/ 0\n$/);
+  });
+});
+
+/** Builds the reference source as one unit and a program that streams the vectors through it as another. */
+function runReference(options: SampleOptions, compiler: 'gcc' | 'g++'): string {
+  const result = sampleResult({ ...options, languages: ['c-source'] });
+  const [standard, extension] = compiler === 'gcc' ? ['-std=c99', 'c'] : ['-std=c++11', 'cpp'];
+  const files = {
+    'belt_taps.h': cTaps(result, mark),
+    'belt_vectors.h': cVectors(result, mark),
+    'belt_filter.h': cFilterHeader(result, mark),
+    [`belt_filter.${extension}`]: cFilterSource(result, mark),
+    [`main.${extension}`]: referenceProgram(numberType(signalWords(result.document).input).c),
+  };
+  for (const [name, text] of Object.entries(files)) writeFileSync(join(folder, name), text);
+  const flags = [standard, '-Wall', '-Wextra', '-Werror', '-pedantic', '-Wconversion', '-ffp-contract=off'];
+  const sanitised = ['-fsanitize=undefined', '-fno-sanitize-recover=all'];
+  const sources = [`belt_filter.${extension}`, `main.${extension}`];
+  execFileSync(compiler, [...flags, ...sanitised, ...sources, '-o', 'program'], { cwd: folder });
+  return execFileSync(join(folder, 'program'), { encoding: 'utf8' });
+}
+
+describe.skipIf(!needs('gcc'))('the reference in C', () => {
+  const both: [string, SampleOptions][] = [
+    ...formats,
+    ['float32', { word: 'float32' }],
+    ['float64', { word: 'float64', order: 'oldest-first' }],
+    [
+      'an accumulator of 64 bits that saturates',
+      { word: 32, inputWord: 32, outputWord: 32, accumulator: 64, accumulatorOverflow: 'saturate' },
+    ],
+  ];
+
+  it.each(both)('puts out the vectors without undefined behaviour (gcc): %s', (_, options) => {
+    expect(runReference(options, 'gcc')).toBe('0 wrong\n');
+  });
+
+  it.skipIf(!needs('g++')).each(both.filter((_, i) => i % 4 === 0))('and as C++ (g++): %s', (_, options) => {
+    expect(runReference(options, 'g++')).toBe('0 wrong\n');
+  });
+});
+
+describe.skipIf(!needs('gcc'))('attributes of the arrays', () => {
+  it('reach the compiler: alignment and section are as asked', () => {
+    const attributes = {
+      cBefore: '__attribute__((aligned(64)))',
+      cAfter: '__attribute__((section(".belt")))',
+      rust: '',
+    };
+    expect(run({ attributes }, integerProgram, 'gcc')).toMatch(/ 0\n$/);
+    const symbols = execFileSync('objdump', ['-t', '-j', '.belt', 'program'], {
+      cwd: folder,
+      encoding: 'utf8',
+    });
+    expect(symbols).toMatch(/belt_taps/);
+    expect(Number.parseInt(/^([0-9a-f]+).*belt_taps$/m.exec(symbols)?.[1] ?? '1', 16) % 64).toBe(0);
   });
 });
 

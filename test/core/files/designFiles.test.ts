@@ -19,6 +19,7 @@ describe('designFiles', () => {
       'generated/belt_taps.h',
       'generated/belt_vectors.h',
       'generated/belt_taps.rs',
+      'generated/belt_vectors.rs',
       'generated/belt_taps.csv',
       'generated/belt_taps.npy',
       'generated/belt.note.md',
@@ -38,6 +39,7 @@ describe('designFiles', () => {
     };
     expect(paths(options)).toEqual([
       'a/b/L3_taps.rs',
+      'a/b/L3_vectors.rs',
       'a/b/line 3.note.md',
       'a/b/line 3.note/impulse.svg',
       'a/b/line 3.note/magnitude.svg',

@@ -1,4 +1,4 @@
-import { execFileSync, spawnSync } from 'node:child_process';
+import { execFileSync } from 'node:child_process';
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -7,6 +7,7 @@ import { csvTaps } from '../../../core/files/csvTaps';
 import { readMark } from '../../../core/files/generatedMark';
 import { npyTaps } from '../../../core/files/npyTaps';
 import { rustTaps } from '../../../core/files/rustTaps';
+import { rustVectors } from '../../../core/files/rustVectors';
 import { hostileNames } from '../../support/hostileNames';
 import { needs, python } from '../../support/programs';
 import { type SampleOptions, sampleResult } from '../../support/sampleResult';
@@ -37,10 +38,7 @@ function allNamed(text: string): SampleOptions {
 }
 
 // No Debian package that the tests bring along: run where a Rust compiler happens to be.
-const rust = spawnSync('rustc', ['--version']).status === 0;
-if (!rust) console.warn('left out: tests that need rustc, which is not installed here');
-
-describe.skipIf(!rust)('SYMBOL_taps.rs, built by rustc', () => {
+describe.skipIf(!needs('rustc'))('SYMBOL_taps.rs, built by rustc', () => {
   it.each(formats)('is a module without warnings whose values read back: %o', (options) => {
     writeFileSync(join(folder, 'belt_taps.rs'), rustTaps(sampleResult(options), mark));
     writeFileSync(join(folder, 'lib.rs'), '#![no_std]\npub mod belt_taps;\n');
@@ -55,6 +53,43 @@ fn main() { println!("{:?}", belt_taps::TAPS); }
     const round = options.word === 'float32' ? Math.fround : Number;
     expect((JSON.parse(printed) as number[][]).map((row) => row.map(round))).toEqual(rows(options));
   });
+});
+
+describe.skipIf(!needs('rustc'))('SYMBOL_vectors.rs beside it, built by rustc', () => {
+  it.each([{}, { order: 'oldest-first', word: 12 }] as SampleOptions[])(
+    'come out of a plain filter in Rust: %o',
+    (options) => {
+      const attributes = { cBefore: '', cAfter: '', rust: '#[link_section = ".belt"] #[used]' };
+      const result = sampleResult({ ...options, attributes });
+      writeFileSync(join(folder, 'belt_taps.rs'), rustTaps(result, mark));
+      writeFileSync(join(folder, 'belt_vectors.rs'), rustVectors(result, mark));
+      const main = `#[allow(dead_code)]
+mod belt_taps;
+#[allow(dead_code)]
+mod belt_vectors;
+use belt_taps::*;
+use belt_vectors::*;
+fn main() {
+    let mut wrong = 0;
+    for n in 0..VECTOR_SAMPLES {
+        let mut acc: i64 = 1i64 << FRACTION_BITS >> 1;
+        for r in 0..INPUTS {
+            for k in 0..LENGTH.min(n + 1) {
+                let at = if NEWEST_FIRST { k } else { LENGTH - 1 - k };
+                acc += TAPS[r][at] as i64 * INPUT[r][n - k] as i64;
+            }
+        }
+        let y = (acc >> FRACTION_BITS).clamp(i16::MIN as i64, i16::MAX as i64);
+        if y != EXPECTED[n] as i64 { wrong += 1; }
+    }
+    println!("{} {}", wrong, VECTOR_EXCERPT);
+}
+`;
+      writeFileSync(join(folder, 'main.rs'), main);
+      execFileSync('rustc', ['-D', 'warnings', 'main.rs'], { cwd: folder });
+      expect(execFileSync(join(folder, 'main'), { encoding: 'utf8' })).toBe('0 0\n');
+    },
+  );
 });
 
 describe('SYMBOL_taps.rs', () => {

@@ -71,7 +71,11 @@ describe('NAME.taps.json', () => {
     result.arithmetic.worstCase = { min: -(2n ** 62n), max: 2n ** 62n + 1n, bits: 64 };
     const { arithmetic } = JSON.parse(tapsJson(result, mark, files));
     expect(arithmetic).toMatchObject({ overflows: 7, accumulatorOverflows: 3, outputOverflows: 4 });
-    expect(arithmetic.worstCase).toEqual({ min: '-4611686018427387904', max: '4611686018427387905' });
+    expect(arithmetic.worstCase).toEqual({
+      bits: 64,
+      min: '-4611686018427387904',
+      max: '4611686018427387905',
+    });
   });
 
   it('has null for what is not there or not finite', () => {
