@@ -54,6 +54,10 @@ export const pairSentences = table({
     severity: 'blocker',
     says: 'no such file; expected a pairing document.',
   },
+  'not-a-document': {
+    severity: 'blocker',
+    says: 'this is no text; expected a pairing document (NAME.pairing.json). "tapwright inspect" shows recordings, "tapwright pair" makes a document of them.',
+  },
   'document-exists': {
     severity: 'blocker',
     says: 'the document is there already and is left as it is. Name another with -o.',

@@ -4,23 +4,26 @@ const largest32 = 0xffffffff;
 /**
  * Header of a 32-bit float WAV file whose samples follow it: RIFF with a `fact` chunk, or RF64 (EBU Tech 3306) where the
  * samples need more than 4 GiB.
- * @param sampleRate in Hz; a WAV header holds whole numbers, so that it is rounded
+ * @param sampleRate in Hz; a WAV header holds whole numbers from 1, so that it is rounded
  */
 export function floatWavHeader(sampleRate: number, channels: number, samples: number): Uint8Array {
   const dataBytes = 4 * channels * samples;
   const wide = dataBytes + 76 > largest32;
-  const writer = newWriter(wide ? 92 : 56);
+  const writer = newWriter(wide ? 94 : 58);
+  const rate = Math.max(1, Math.round(sampleRate));
   const riffBytes = writer.size - 8 + dataBytes;
   writer
     .text(wide ? 'RF64' : 'RIFF')
     .u32(wide ? largest32 : riffBytes)
     .text('WAVE');
   if (wide) writer.text('ds64').u32(28).u64(riffBytes).u64(dataBytes).u64(samples).u32(0);
-  writer.text('fmt ').u32(16).u16(floatFormat).u16(channels).u32(Math.round(sampleRate));
+  writer.text('fmt ').u32(18).u16(floatFormat).u16(channels).u32(rate);
   writer
-    .u32(Math.round(sampleRate) * 4 * channels)
+    .u32(rate * 4 * channels)
     .u16(4 * channels)
-    .u16(32);
+    .u16(32)
+    // No extension; formats other than PCM say so.
+    .u16(0);
   writer.text('fact').u32(4).u32(Math.min(samples, largest32));
   writer.text('data').u32(wide ? largest32 : dataBytes);
   return writer.bytes;

@@ -1,4 +1,4 @@
-import { readFile, stat } from 'node:fs/promises';
+import { open, readFile, stat } from 'node:fs/promises';
 import { basename, dirname, relative, resolve, sep } from 'node:path';
 import { largestDocument } from '../../core/document/parseJson';
 import { type Finding, finding } from '../../core/findings/finding';
@@ -30,6 +30,7 @@ export async function openWorkplace(
   try {
     const about = await stat(path);
     if (!about.isFile()) return finding('not-a-file', {}, place);
+    if (await looksLikeRecording(path)) return finding('not-a-document', {}, place);
     if (about.size > largestDocument)
       return finding('document-too-large', { size: about.size, limit: largestDocument }, place);
     text = new TextDecoder().decode(await readFile(path));
@@ -45,6 +46,18 @@ export async function openWorkplace(
     place: { file: basename(path), folder: relative(root, folder).split(sep).join('/') },
     text,
   };
+}
+
+/** Recordings are named where documents are expected now and then; JSON has neither of their first bytes nor a NUL. */
+async function looksLikeRecording(path: string): Promise<boolean> {
+  const file = await open(path);
+  try {
+    const { buffer, bytesRead } = await file.read(Buffer.alloc(64), 0, 64, 0);
+    const start = buffer.subarray(0, bytesRead).toString('latin1');
+    return start.includes('\0') || start.startsWith('RIFF') || start.startsWith('\x93NUMPY');
+  } finally {
+    await file.close();
+  }
 }
 
 /** The given root, otherwise the current folder where it holds the folder, otherwise the folder itself. */

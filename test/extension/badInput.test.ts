@@ -203,12 +203,14 @@ describe('the other commands', () => {
     [['inspect', 'nothing.wav'], 'missing-file'],
     [['inspect', 'nothing.pairing.json'], 'missing-document'],
     [['check', 'nothing.pairing.json'], 'missing-document'],
+    [['check', 'noise.wav'], 'not-a-document'],
     [['pair', 'nothing.wav', 'a.csv', '--rate', '1000'], 'missing-file'],
     [['pair', 'a.csv', '--desired', 'q'], 'channel-missing'],
     [['pair', '/etc/hostname', 'a.csv'], 'outside-root'],
     [['apply', 'nothing.taps.json', 'a.csv', '-o', 'o.wav'], 'missing-file'],
     [['apply', 'a.csv', 'a.csv', '-o', 'o.wav'], 'not-taps'],
   ])('%j: exit 2', (args, code) => {
+    writeFileSync(join(folder, 'noise.wav'), Buffer.from('RIFF\0\0\0\0WAVE', 'latin1'));
     const before = snapshot(folder);
     const { status, out, err } = tapwright(folder, ...args);
     expect(out + err).toMatch(new RegExp(`^[^\\n]+:\\d+:\\d+: error: .*\\[${code}\\]$`, 'm'));

@@ -83,7 +83,8 @@ async function run(given: Arguments): Promise<number> {
         desired === null
           ? `input ${inputs.join(' and ')}`
           : `input ${inputs.join(' and ')}, desired ${desired}`;
-      terminal.print(`wrote ${output}: the ${application.wanted}, ${samples} samples (${from})`);
+      const rate = Number.isInteger(sampleRate) ? '' : `; its header rounds the rate of ${sampleRate} Hz`;
+      terminal.print(`wrote ${output}: the ${application.wanted}, ${samples} samples (${from})${rate}`);
     }
     return exit.ok;
   } catch (error) {

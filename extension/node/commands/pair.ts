@@ -89,7 +89,10 @@ async function run(given: Arguments): Promise<number> {
         ),
       );
     } else {
-      terminal.print(`wrote ${show(output)}: ${job}, input ${inputs.join(' and ')}, desired ${desired}`);
+      const of = (channels: string[], path: string) => `${channels.join(' and ')} of ${basename(path)}`;
+      terminal.print(
+        `wrote ${show(output)}: ${job}, input ${of(inputs, inputFile)}, desired ${of([desired], desiredFile)}`,
+      );
     }
     return exit.ok;
   } catch (error) {
