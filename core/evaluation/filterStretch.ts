@@ -1,9 +1,10 @@
 import type { Pace } from '../pace';
 import type { Interval } from '../pair/intervals';
+import { eachBlock } from '../pair/pieces';
 import type { SignalReader } from '../pair/signals';
 import { blockFor, newBlockSpectra, newSpectrum, type Spectrum } from '../statistics/blockSpectra';
 
-/** What a filter made of one block of n. */
+/** What a filter made of one block of n; its arrays hold until the next block. */
 export interface FilteredBlock {
   from: number;
   /** x_r[n - (M-1)] onwards: the block with M-1 samples of history before it. */
@@ -32,15 +33,11 @@ export async function filterStretch(
   const responses = coefficients.map((row) => responseOf(row, transform.size));
   const joined = newSpectrum(transform.size);
   const sum = newSpectrum(transform.size);
-  let before: Float64Array[] | null = null;
+  let first = true;
 
-  for (let from = stretch.from; from < stretch.to; from += block) {
-    const to = Math.min(stretch.to, from + block);
-    const signals = await read(from, to, history);
-    if (before === null) {
-      before = signals.inputs.map((x) => x.subarray(0, history));
-      spectra.push(before.map((x) => late(x, block)));
-    }
+  await eachBlock(read, stretch, block, history, async (signals, from, to) => {
+    if (first) spectra.push(signals.inputs.map((x) => late(x.subarray(0, history), block)));
+    first = false;
     spectra.push(signals.inputs.map((x) => x.subarray(history)));
     sum.re.fill(0);
     sum.im.fill(0);
@@ -49,14 +46,12 @@ export async function filterStretch(
       addProduct(sum, joined, responses[r]);
     }
     transform.inverse(sum.re, sum.im);
-    await visit({
-      from,
-      inputs: signals.inputs,
-      desired: signals.desired,
-      output: sum.re.slice(block, block + to - from),
-    });
+    const { inputs: x, desired } = signals;
+    const output = sum.re.subarray(block, block + to - from);
+    const pending = visit({ from, inputs: x, desired, output });
+    if (pending !== undefined) await pending;
     await pace.step('filtering', to - stretch.from, stretch.to - stretch.from);
-  }
+  });
 
   function responseOf(row: Float64Array, size: number): Spectrum {
     const response = newSpectrum(size);

@@ -1,13 +1,15 @@
 import type { Windowing } from '../document/pairingDocument';
 import { powerDecibels } from '../figures/decibels';
 import type { Pace } from '../pace';
-import { type Interval, totalLength } from '../pair/intervals';
+import type { Interval } from '../pair/intervals';
 import { signalReader } from '../pair/signals';
 import type { Take } from '../pair/take';
+import type { NormalSums } from '../statistics/normalSums';
 import { type ErrorTally, newErrorTally } from './errorTally';
-import { type Filter, filterLength } from './filter';
+import type { Filter } from './filter';
 import { filterStretch } from './filterStretch';
-import { runsOver } from './measuredRuns';
+import { fitStretches } from './fitStretches';
+import { newWeighing } from './weighing';
 
 /** Error of the filter over a set of samples n. */
 export interface ErrorFigure {
@@ -23,6 +25,27 @@ export function errorFigure(samples: number, errorEnergy: number, desiredEnergy:
   return { samples, mse: errorEnergy / samples, nmseDb: powerDecibels(errorEnergy / desiredEnergy) };
 }
 
+/** Below this the error that the statistics tell has lost too many digits, and the filter is run again. */
+const lowestFromSums = -80;
+
+/**
+ * The error over the n of the fit as the statistics tell it: `Σ d² - 2 wᵀθ + wᵀΦw`. Relative error about 1e-15 divided by
+ * the error's share of the power, so 1e-7 at -80 dB.
+ * @param output `wᵀ (Φ/L) w`
+ * @returns null where that is too inexact
+ */
+export function fitFigureFromSums(sums: NormalSums, filter: Filter, output: number): ErrorFigure | null {
+  let cross = 0;
+  filter.coefficients.forEach((row, r) => {
+    row.forEach((w, k) => {
+      cross += w * sums.cross[r][k];
+    });
+  });
+  const energy = sums.desiredEnergy - 2 * cross + output * sums.count;
+  const figure = errorFigure(sums.count, energy, sums.desiredEnergy);
+  return figure.nmseDb > lowestFromSums ? figure : null;
+}
+
 /**
  * The error over the very n and with the very signals of the fit, found by filtering again: sums of squares found from
  * the statistics mean nothing below about -140 dB.
@@ -34,26 +57,16 @@ export async function fitFigure(
   pace: Pace,
 ): Promise<ErrorFigure> {
   const tally = newErrorTally(1, 1);
-  if (windowing === 'covariance') {
-    for (const { take, segments } of runsOver(takes, (t) => t.fit, filter)) {
-      for (const segment of segments) await tallyStretch(take, segment, undefined, filter, pace, tally);
-    }
-    return errorFigure(tally.samples, tally.errorEnergy, tally.desiredEnergy);
+  let samples = 0;
+  for (const { take, stretch, support, count } of fitStretches(takes, windowing, filter)) {
+    await tallyStretch(take, stretch, support, filter, pace, tally);
+    samples += count;
   }
-  for (const take of takes) {
-    for (const interval of take.fit) {
-      const whole = {
-        from: interval.from + Math.min(0, filter.delay),
-        to: interval.to + Math.max(filterLength(filter) - 1, filter.delay),
-      };
-      await tallyStretch(take, whole, interval, filter, pace, tally);
-    }
-  }
-  const samples = takes.reduce((sum, take) => sum + totalLength(take.fit), 0);
   return errorFigure(samples, tally.errorEnergy, tally.desiredEnergy);
 }
 
-async function tallyStretch(
+/** Adds the error over a stretch of n, in the band that it is weighted to. */
+export async function tallyStretch(
   take: Take,
   stretch: Interval,
   support: Interval | undefined,
@@ -61,8 +74,10 @@ async function tallyStretch(
   pace: Pace,
   tally: ErrorTally,
 ): Promise<void> {
-  const read = signalReader(take, { means: filter.means, delay: filter.delay, support });
-  await filterStretch(read, stretch, filter.coefficients, pace, ({ desired, output }) => {
-    tally.add(desired, output);
+  const read = signalReader(take, { means: filter.means, delay: filter.delay, support, reuse: true });
+  const weighing = newWeighing(filter.band);
+  await filterStretch(read, weighing.begin(stretch), filter.coefficients, pace, ({ desired, output }) => {
+    const weighed = weighing.push([desired, output]);
+    if (weighed !== null) tally.add(weighed.inside[0], weighed.inside[1]);
   });
 }

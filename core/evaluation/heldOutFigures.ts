@@ -1,13 +1,14 @@
-import { type TargetFilter, targetInput, targetSimulator } from '../numbers/targetFilter';
+import type { TargetFilter } from '../numbers/targetFilter';
 import type { Pace } from '../pace';
-import { signalReader } from '../pair/signals';
 import { newWelch, type Welch } from '../spectra/welch';
 import { blockCount, type ErrorTally, newErrorTally, relativeStandardError } from './errorTally';
 import { type Filter, filterLength } from './filter';
 import { filterStretch } from './filterStretch';
 import { type ErrorFigure, errorFigure } from './fitFigure';
 import type { Run } from './measuredRuns';
+import { targetReader } from './targetReader';
 import { newTargetTally, type TargetFigures, type TargetTally } from './targetTally';
+import { newWeighing } from './weighing';
 
 export interface TakeFigure extends ErrorFigure {
   name: string;
@@ -29,7 +30,10 @@ export interface SpectraFigures {
 }
 
 export interface Evaluation {
+  /** In the band that the error is weighted to, as all figures but the next and the spectra. */
   total: ErrorFigure;
+  /** NMSE of what lies outside that band, in dB; null where all frequencies count alike. */
+  outsideBandDb: number | null;
   takes: TakeFigure[];
   spectra: SpectraFigures;
   target: TargetFigures;
@@ -49,12 +53,13 @@ export async function evaluate(
   const segment = welchSegment(runs);
   const welch = newWelch(3, segment, sampleRate);
   const targetTally = newTargetTally();
+  const outside = newErrorTally(1, 1);
   const takes: TakeFigure[] = [];
   let errorEnergy = 0;
   let desiredEnergy = 0;
   for (const run of runs) {
     const tally = newErrorTally(run.samples, blockCount(run.samples, filterLength(filter)));
-    await evaluateRun(run, filter, target, pace, { tally, welch, targetTally });
+    await evaluateRun(run, filter, target, pace, { tally, outside, welch, targetTally });
     takes.push({ name: run.take.name, ...takeFigure(tally) });
     errorEnergy += tally.errorEnergy;
     desiredEnergy += tally.desiredEnergy;
@@ -65,6 +70,9 @@ export async function evaluate(
   const frequencies = desired.map((_, f) => (f * sampleRate) / segment);
   return {
     total,
+    outsideBandDb: filter.band
+      ? errorFigure(outside.samples, outside.errorEnergy, outside.desiredEnergy).nmseDb
+      : null,
     takes,
     spectra: { segment, averages: welch.averages, frequencies, desired, output, error },
     target: targetTally.figures(total, desiredEnergy),
@@ -73,32 +81,39 @@ export async function evaluate(
 
 interface Sinks {
   tally: ErrorTally;
+  outside: ErrorTally;
   welch: Welch;
   targetTally: TargetTally;
 }
 
 async function evaluateRun(
-  run: Run,
+  { take, segments }: Run,
   filter: Filter,
   target: TargetFilter,
   pace: Pace,
-  sinks: Sinks,
+  { tally, outside, welch, targetTally }: Sinks,
 ): Promise<void> {
-  const { take } = run;
-  const history = filterLength(filter) - 1;
-  const read = signalReader(take, { means: filter.means, delay: filter.delay });
-  const none = { inputs: take.inputs.map(() => 0), desired: 0 };
-  const readRaw = signalReader(take, { means: none, delay: filter.delay });
-  const simulate = targetSimulator(target);
-  for (const stretch of run.segments) {
-    sinks.welch.gap();
-    await filterStretch(read, stretch, filter.coefficients, pace, async ({ from, desired, output }) => {
-      sinks.tally.add(desired, output);
-      sinks.welch.push([desired, output, desired.map((d, n) => d - output[n])]);
-      const raw = await readRaw(from, from + desired.length, history);
-      const simulation = simulate(raw.inputs.map((x, r) => targetInput(target, r, x)));
-      sinks.targetTally.add(desired, output, simulation.output, target.scaling.outputCount);
-      sinks.targetTally.count(simulation);
+  const { read, counts } = targetReader(take, filter, target, targetTally);
+  const { outputCount } = target.scaling;
+  const weighing = newWeighing(filter.band);
+  let error = new Float64Array(0);
+  for (const stretch of segments) {
+    welch.gap();
+    const whole = weighing.begin(stretch);
+    await filterStretch(read, whole, filter.coefficients, pace, (block) => {
+      const { from } = block;
+      const written = counts(from, from + block.desired.length);
+      const weighed = weighing.push([block.desired, block.output, written]);
+      if (weighed === null) return;
+      const [desired, output] = weighed.raw;
+      const { length } = desired;
+      if (error.length !== length) error = new Float64Array(length);
+      for (let n = 0; n < length; n++) error[n] = desired[n] - output[n];
+      welch.push([desired, output, error]);
+      const [d, y, counted] = weighed.inside;
+      tally.add(d, y);
+      targetTally.add(d, y, counted, outputCount);
+      if (weighed.outside !== null) outside.add(weighed.outside[0], weighed.outside[1]);
     });
   }
 }

@@ -32,6 +32,6 @@ export const textSentences = table({
   },
   'uneven-time': {
     severity: 'caution',
-    says: 'the time column is not uniform: {what}. The filter takes the samples as evenly spaced at {rate} Hz. {cure}',
+    says: 'the time column is not uniform: {what}. {cure}',
   },
 });

@@ -28,7 +28,7 @@ export async function measureMoments(
   const desired = newRunningMoments();
   for (const take of takes) {
     const none = { inputs: take.inputs.map(() => 0), desired: 0 };
-    const read = signalReader(take, { means: none, delay: 0 });
+    const read = signalReader(take, { means: none, delay: 0, reuse: true });
     for (const { from, to } of take.fit) {
       for (let start = from; start < to; start += block) {
         const signals = await read(start, Math.min(to, start + block));

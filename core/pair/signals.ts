@@ -29,6 +29,8 @@ export interface ReaderOptions {
   delay: number;
   /** Where given, samples of every signal outside this interval (of its own index) are zero. */
   support?: Interval | undefined;
+  /** The arrays of one reading are used again by the next, so that long passes need no more memory. */
+  reuse?: boolean;
 }
 
 /**
@@ -37,14 +39,27 @@ export interface ReaderOptions {
  */
 export function signalReader(take: Take, options: ReaderOptions): SignalReader {
   const { means, delay, support } = options;
+  const inputPool = options.reuse ? newPool() : undefined;
+  const desiredPool = options.reuse ? newPool() : undefined;
   return async (from, to, history = 0) => {
-    const inputs = await readTracks(take.inputs, from - history, to, support);
-    const [desired] = await readTracks([take.desired], from - delay, to - delay, support);
+    const inputs = await readTracks(take.inputs, from - history, to, support, inputPool);
+    const [desired] = await readTracks([take.desired], from - delay, to - delay, support, desiredPool);
     inputs.forEach((input, r) => {
       subtract(input, means.inputs[r]);
     });
     subtract(desired, means.desired);
     return { inputs: inputs.map(padded), desired: padded(desired) };
+  };
+}
+
+/** Arrays by the number of the track, made longer where they have to be. */
+type Pool = (track: number, length: number) => Float64Array;
+
+function newPool(): Pool {
+  const arrays: Float64Array[] = [];
+  return (track, length) => {
+    if ((arrays[track]?.length ?? -1) < length) arrays[track] = new Float64Array(length);
+    return arrays[track];
   };
 }
 
@@ -60,6 +75,7 @@ async function readTracks(
   from: number,
   to: number,
   support: Interval | undefined,
+  pool?: Pool,
 ): Promise<Stretch[]> {
   const stretches: Stretch[] = new Array(tracks.length);
   const byRecording = new Map<Recording, number[]>();
@@ -71,7 +87,9 @@ async function readTracks(
     const end = Math.max(start, Math.min(to, support?.to ?? to, recording.samples));
     const channels = members.map((i) => tracks[i].channel);
     const planes =
-      end > start ? await recording.read(channels, start, end) : channels.map(() => new Float64Array(0));
+      end > start
+        ? await recording.read(channels, start, end, pool && members.map((i) => pool(i, end - start)))
+        : channels.map(() => new Float64Array(0));
     members.forEach((i, m) => {
       checkFinite(planes[m], tracks[i], start);
       stretches[i] = { samples: planes[m], offset: start - from, length: to - from };

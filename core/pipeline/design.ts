@@ -1,3 +1,4 @@
+import { residualFindings } from '../confidence/residualFindings';
 import { bandFigures } from '../evaluation/bandFigures';
 import { fitFigure } from '../evaluation/fitFigure';
 import { evaluate } from '../evaluation/heldOutFigures';
@@ -9,6 +10,7 @@ import { type TargetFilter, targetInput } from '../numbers/targetFilter';
 import { type TestVectors, testVectors } from '../numbers/testVectors';
 import { signalReader } from '../pair/signals';
 import { arithmeticResult } from './arithmeticResult';
+import { confidenceOf } from './confidence';
 import type { DesignResult } from './designResult';
 import { type Fit, fitPair } from './fitPair';
 import type { Host } from './host';
@@ -58,16 +60,20 @@ export async function evaluateDesign(
 ): Promise<DesignResult> {
   const { document, takes, sampleRate } = pairing;
   const { filter } = fit;
-  const fitted = await fitFigure(takes, document.filter.windowing, filter, host.pace);
+  const fitted = fit.figure ?? (await fitFigure(takes, document.filter.windowing, filter, host.pace));
   const heldOut = heldOutRuns(takes, document.job, filter);
   const proved = heldOut.runs.length > 0;
   const runs = proved ? heldOut.runs : runsOver(takes, (take) => take.fit, filter);
   const evaluation = await evaluate(runs, filter, target.filter, sampleRate, host.pace);
   const shape = await shapeResult(pairing, fit, target.filter, runs, evaluation.total.nmseDb, host.pace);
+  const confidence = await confidenceOf(pairing, fit, host.pace);
+  const summaries = takeSummaries(takes);
+  const inputs = summaries[0].inputs.map(({ channel }) => channel);
   const trustworthy = document.job !== 'cancel' || heldOut.disturbanceOnly;
   const findings = [
     ...earlier,
     ...proofFindings(pairing, fit, heldOut),
+    ...residualFindings(confidence.residuals, inputs, document.filter.length),
     ...overflowFindings(target.filter, evaluation.target),
     ...gainFindings(pairing, shape),
     ...checkLimits(document.limits, {
@@ -82,18 +88,20 @@ export async function evaluateDesign(
     documentSha256: pairing.documentSha256,
     sampleRate,
     recordings: recordingSummaries(pairing),
-    takes: takeSummaries(takes),
-    inputs: takeSummaries(takes)[0].inputs.map(({ channel }) => channel),
-    desired: takeSummaries(takes)[0].desired.channel,
+    takes: summaries,
+    inputs,
+    desired: summaries[0].desired.channel,
     coefficients: [...filter.coefficients],
     means: filter.means,
     inputPowers: fit.moments.inputPowers,
     method: fit.solution.method,
     conditionNumber: fit.solution.conditionNumber,
     fit: fitted,
+    confidence,
     heldOut: proved
       ? {
           ...evaluation.total,
+          outsideBandDb: evaluation.outsideBandDb,
           disturbanceOnly: heldOut.disturbanceOnly,
           bands: bandFigures(evaluation.spectra),
           takes: evaluation.takes,

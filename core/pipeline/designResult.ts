@@ -7,9 +7,11 @@ import type { TestVectors } from '../numbers/testVectors';
 import type { WorstCase } from '../numbers/worstCase';
 import type { Interval } from '../pair/intervals';
 import type { Levels } from '../recordings/levels';
+import type { Method } from '../solvers/prepare';
+import type { Confidence } from './confidence';
 import type { WordStudy } from './studyWords';
 
-export type { BandFigure, ErrorFigure, Interval, SpectraFigures, TakeFigure, TestVectors };
+export type { BandFigure, Confidence, ErrorFigure, Interval, SpectraFigures, TakeFigure, TestVectors };
 
 /** A recording that the design used. */
 export interface RecordingSummary {
@@ -35,6 +37,8 @@ export interface TakeSummary {
 }
 
 export interface HeldOutFigures extends ErrorFigure {
+  /** NMSE outside the band that the error is weighted to, in dB, where all other figures are of the band; null without. */
+  outsideBandDb: number | null;
   /** True where the figures are over the held-out part of `disturbanceOnly` intervals. */
   disturbanceOnly: boolean;
   bands: BandFigure[];
@@ -97,9 +101,10 @@ export interface DesignResult {
   means: { inputs: number[]; desired: number };
   /** Mean square of each input over the fit intervals, after mean removal. */
   inputPowers: number[];
-  method: 'levinson' | 'schur' | 'cholesky';
+  method: Method;
   conditionNumber: number;
   fit: ErrorFigure;
+  confidence: Confidence;
   heldOut: HeldOutFigures | null;
   spectra: SpectraFigures;
   arithmetic: ArithmeticResult;

@@ -1,24 +1,30 @@
 import type { Filter } from '../evaluation/filter';
+import { type ErrorFigure, fitFigureFromSums } from '../evaluation/fitFigure';
 import { finding, Refusal } from '../findings/finding';
 import type { Pace } from '../pace';
 import { type Moments, measureMoments } from '../pair/moments';
-import { type Fold, foldSystem, newFold, unfold } from '../solvers/fold';
 import { type GainConditions, gainConditions, holdConditions } from '../solvers/fixedGain';
+import { type Fold, foldSystem, newFold, unfold } from '../solvers/fold';
 import { type NormalSystem, normalSystem } from '../solvers/normalSystem';
+import { quadraticForm } from '../solvers/quadraticForm';
 import { type Solution, solve, type Unsolvable } from '../solvers/solve';
 import { gatherSums } from '../statistics/gatherSums';
+import { bandOf } from './askedBand';
 import { checkPair, checkSilence } from './checkPair';
 import type { Pairing } from './pairing';
 
 /** The minimum-mean-squared-error filter of a pairing and what led to it. */
 export interface Fit {
   filter: Filter;
+  /** Over the n of the fit, where the statistics tell it well enough. */
+  figure: ErrorFigure | null;
   /** The taps that the symmetry leaves free, one row an input; all taps where there is none. */
   free: Float64Array[];
   fold: Fold;
   gain: GainConditions | null;
   moments: Moments;
-  /** Of the free taps. */
+  /** Of all taps, and of the free ones. */
+  whole: NormalSystem;
   system: NormalSystem;
   solution: Solution;
   /** The filter without what the document asks of its shape, for the price: without any of it, without the gain alone. */
@@ -35,7 +41,8 @@ export async function fitPair(pairing: Pairing, pace: Pace): Promise<Fit> {
   refuseIfAny(checkPair(pairing));
   const moments = await measureMoments(takes, document.prepare.removeMean, pace);
   refuseIfAny(checkSilence(takes, moments));
-  const sums = await gatherSums(takes, { length, delay, windowing }, moments.means, pace);
+  const band = bandOf(pairing);
+  const sums = await gatherSums(takes, { length, delay, windowing, band }, moments.means, pace);
   const whole = normalSystem(sums, moments.inputPowers);
   const fold = newFold(length, document.filter.symmetry);
   const system = foldSystem(whole, sums.inputs, fold);
@@ -47,6 +54,7 @@ export async function fitPair(pairing: Pairing, pace: Pace): Promise<Fit> {
     coefficients: unfold(fold, taps),
     delay,
     means: moments.means,
+    band,
   });
   const unshaped: Fit['unshaped'] = [];
   if (gain !== null) unshaped.push({ without: 'gain', filter: filterOf(solution.coefficients) });
@@ -54,10 +62,14 @@ export async function fitPair(pairing: Pairing, pace: Pace): Promise<Fit> {
     const freest = solve(whole, sums.inputs, regularisation);
     if ('coefficients' in freest) {
       const { coefficients } = freest;
-      unshaped.push({ without: 'shape', filter: { coefficients, delay, means: moments.means } });
+      unshaped.push({ without: 'shape', filter: { coefficients, delay, means: moments.means, band } });
     }
   }
-  return { filter: filterOf(free), free, fold, gain, moments, system, solution, unshaped };
+  const filter = filterOf(free);
+  // The matrix of a band has the floor in it, which is no part of the error.
+  const figure =
+    band === null ? fitFigureFromSums(sums, filter, quadraticForm(whole, filter.coefficients)) : null;
+  return { filter, figure, free, fold, gain, moments, whole, system, solution, unshaped };
 }
 
 /** The conditions of the document's fixed gain; null where it asks for none. */

@@ -22,8 +22,8 @@ export function framedReader(
   decode: Decoder,
 ): Recording['read'] {
   const frames = Math.max(1, Math.floor(most / frameBytes));
-  return async (channels, from, to) => {
-    const planes = channels.map(() => new Float64Array(to - from));
+  return async (channels, from, to, into) => {
+    const planes = planesFor(channels.length, to - from, into);
     for (let n = from; n < to; n += frames) {
       const count = Math.min(frames, to - n);
       const bytes = await source.read(start + n * frameBytes, count * frameBytes);
@@ -34,4 +34,9 @@ export function framedReader(
     }
     return planes;
   };
+}
+
+/** Arrays of the length asked for, of the memory given where there is some. */
+export function planesFor(count: number, length: number, into?: readonly Float64Array[]): Float64Array[] {
+  return Array.from({ length: count }, (_, c) => into?.[c].subarray(0, length) ?? new Float64Array(length));
 }

@@ -5,6 +5,12 @@ import type { Recording } from './recording';
 
 const block = 65536;
 
+/** Samples of all channels together that a block has at most, so that recordings of many channels need no more memory. */
+const mostSamples = 1 << 21;
+
+/** Sees a block of every channel; `from` is the number of its first sample. */
+export type BlockVisitor = (channels: readonly Float64Array[], from: number) => void;
+
 /** What has been seen of one channel. */
 interface Tally {
   moments: RunningMoments;
@@ -17,15 +23,22 @@ interface Tally {
 /**
  * Levels of every channel in one pass by blocks. Mean and rms keep about 14 digits whatever the offset and the length.
  * A channel without finite samples has levels of 0.
+ * @param visitors whatever else is to be done in the same pass
  */
-export async function measureLevels(recording: Recording, pace: Pace): Promise<Levels[]> {
+export async function measureLevels(
+  recording: Recording,
+  pace: Pace,
+  visitors: readonly BlockVisitor[] = [],
+): Promise<Levels[]> {
   const channels = recording.channels.map((_, c) => c);
   const tallies = channels.map(newTally);
-  for (let from = 0; from < recording.samples; from += block) {
-    const planes = await recording.read(channels, from, Math.min(recording.samples, from + block));
+  const step = Math.min(block, Math.floor(mostSamples / channels.length));
+  for (let from = 0; from < recording.samples; from += step) {
+    const planes = await recording.read(channels, from, Math.min(recording.samples, from + step));
     planes.forEach((samples, c) => {
       addBlock(tallies[c], samples, from);
     });
+    for (const visit of visitors) visit(planes, from);
     await pace.step('levels', from, recording.samples);
   }
   return tallies.map(finish);

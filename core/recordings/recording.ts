@@ -8,6 +8,8 @@ export interface Recording {
   readonly format: string;
   /** True for fixed-point audio (PCM, A-law, µ-law), whose amplitudes are -1..1 of full scale. */
   readonly pcm: boolean;
+  /** Bits of a sample of PCM; left out where the steps are not even (A-law, µ-law) and for all other numbers. */
+  readonly bits?: number;
   /** Text whose line ends do not matter for its digest (8-bit text); false for binary and UTF-16 files. */
   readonly lineEndsIgnored: boolean;
   /** Samples a second, or null where the file does not say. */
@@ -17,10 +19,17 @@ export interface Recording {
   /** Names of the channels as the file gives them; null where it gives none. A time column is no channel. */
   readonly channels: readonly (string | null)[];
   /**
-   * Samples `[from, to)` of the channels asked for (numbers from 0), one new array each, in the file's own unit.
+   * Samples `[from, to)` of the channels asked for (numbers from 0), one array each, in the file's own unit.
    * The range must lie inside the recording.
+   * @param into memory for them, of that length or longer, one array a channel, so that long passes need no more of it;
+   *   where it is left out the arrays are new
    */
-  read(channels: readonly number[], from: number, to: number): Promise<Float64Array[]>;
+  read(
+    channels: readonly number[],
+    from: number,
+    to: number,
+    into?: readonly Float64Array[],
+  ): Promise<Float64Array[]>;
 }
 
 /** What opening a file yields: a recording or, where a finding is a blocker, null. */

@@ -13,12 +13,16 @@ export function conditionNumber(multiply: Operator, solve: Operator, size: numbe
   return largestEigenvalue(multiply, size) * largestEigenvalue(solve, size);
 }
 
-/** Largest eigenvalue of a symmetric positive definite operator, from below. */
-export function largestEigenvalue(apply: Operator, size: number): number {
+/**
+ * Largest eigenvalue of a symmetric positive definite operator, from below.
+ * @param settled ends the steps early where four of them raised the value by no more than this share of it
+ */
+export function largestEigenvalue(apply: Operator, size: number, settled = 0): number {
   const basis: Float64Array[] = [];
   const diagonal: number[] = [];
   const beside: number[] = [];
   let vector = startVector(size);
+  let value = 0;
   for (let j = 0; j < Math.min(steps, size); j++) {
     scale(vector, 1 / Math.sqrt(inner(vector, vector)));
     basis.push(vector);
@@ -29,6 +33,11 @@ export function largestEigenvalue(apply: Operator, size: number): number {
     }
     const length = Math.sqrt(inner(next, next));
     if (!(length > 1e-14 * diagonal[0])) break;
+    if (settled > 0 && j % 4 === 3) {
+      const raised = largestOfTridiagonal(diagonal, beside);
+      if (raised - value <= settled * raised) return raised;
+      value = raised;
+    }
     beside.push(length);
     vector = next;
   }

@@ -1,5 +1,6 @@
 import { normalMatrix } from '../statistics/normalMatrix';
 import type { NormalSums } from '../statistics/normalSums';
+import { type ShiftStructure, shiftStructure } from './displacement';
 
 /**
  * The normal equations made free of units: with `D = diag(√P_r)`,
@@ -11,8 +12,11 @@ export interface NormalSystem {
   right: Float64Array;
   /** √P_r for every unknown: `w = solution / scale`. */
   scale: Float64Array;
-  /** `D⁻¹ (Φ/L) D⁻¹`: its first column where it is Toeplitz, otherwise row-major with the lower triangle filled. */
-  matrix: { toeplitz: Float64Array } | { dense: Float64Array };
+  /**
+   * `A = D⁻¹ (Φ/L) D⁻¹`: its first column where it is Toeplitz, otherwise row-major with the lower triangle filled.
+   * Where what its shift updates need is at hand, the matrix is formed only when it is first asked for.
+   */
+  matrix: { toeplitz: Float64Array } | { readonly dense: Float64Array; structure?: ShiftStructure };
 }
 
 /**
@@ -34,14 +38,27 @@ export function normalSystem(sums: NormalSums, powers: readonly number[]): Norma
     const toeplitz = sums.correlations[0][0].map((value) => value / count / powers[0]);
     return { size, right, scale, matrix: { toeplitz } };
   }
-  const dense = normalMatrix(sums);
-  for (let i = 0; i < size; i++) {
-    for (let j = 0; j <= i; j++) dense[i * size + j] /= count * scale[i] * scale[j];
-  }
-  return { size, right, scale, matrix: { dense } };
+  let formed: Float64Array | null = null;
+  const matrix = {
+    structure: shiftStructure(sums, powers),
+    get dense() {
+      formed ??= denseMatrix(sums, scale);
+      return formed;
+    },
+  };
+  return { size, right, scale, matrix };
 }
 
-/** Elements (i, j), i ≥ j, of `A + ρ I` with the matrix of the system. */
+function denseMatrix(sums: NormalSums, scale: Float64Array): Float64Array {
+  const size = scale.length;
+  const dense = normalMatrix(sums);
+  for (let i = 0; i < size; i++) {
+    for (let j = 0; j <= i; j++) dense[i * size + j] /= sums.count * scale[i] * scale[j];
+  }
+  return dense;
+}
+
+/** Elements (i, j), i ≥ j, of `A + ρ I`. The first of them forms A where it is not Toeplitz. */
 export function elementsOf(
   { size, matrix }: NormalSystem,
   regularisation: number,
@@ -50,11 +67,14 @@ export function elementsOf(
     const { toeplitz } = matrix;
     return (i, j) => (i === j ? toeplitz[0] + regularisation : toeplitz[i - j]);
   }
-  const { dense } = matrix;
-  return (i, j) => (i === j ? dense[i * size + i] + regularisation : dense[i * size + j]);
+  let dense: Float64Array | null = null;
+  return (i, j) => {
+    dense ??= matrix.dense;
+    return i === j ? dense[i * size + i] + regularisation : dense[i * size + j];
+  };
 }
 
-/** `(A + ρ I) v` with the matrix of the system. */
+/** `(A + ρ I) v`, element by element. */
 export function multiply(system: NormalSystem, regularisation: number, v: Float64Array): Float64Array {
   const { size } = system;
   const product = new Float64Array(size);

@@ -1,9 +1,10 @@
-import { type CholeskyFactor, factorCholesky, solveCholesky } from './cholesky';
-import { conditionNumber, type Operator } from './conditionNumber';
-import { solveLevinson } from './levinson';
-import { multiply, type NormalSystem } from './normalSystem';
+import type { CholeskyFactor } from './cholesky';
+import { largestEigenvalue } from './conditionNumber';
+import type { NormalSystem } from './normalSystem';
+import { type Method, methodFor, prepare } from './prepare';
+import { norm, refine } from './refine';
 
-export type Method = 'levinson' | 'cholesky';
+export type { Method };
 
 export interface Solution {
   /** One row an input, newest-first. */
@@ -27,72 +28,76 @@ export interface Unsolvable {
 /** Above this the taps would have lost all but about four of their digits. */
 export const largestConditionNumber = 1e12;
 
+/** Unknowns up to which Cholesky's method is tried where the Schur algorithm fails: a second or two. */
+const mostForCholesky = 2048;
+
 /**
- * Solves `(Φ/L + ρ diag(P_r)) w = θ/L`: Levinson's recursion where the matrix is Toeplitz, Cholesky's method
- * otherwise, and one step of iterative refinement. Relative error of the taps about 1e-16 times the condition number.
+ * Residual that refinement must reach, as a share of the largest eigenvalue times the solution: 1e-16 times some
+ * hundreds is what products by transforms leave; where the approximate inverse is none it stays near 1.
+ */
+const largestResidual = 1e-13;
+
+/** Change of four Lanczos steps at which the condition number of a large matrix is known well enough to be shown. */
+const settled = 1e-3;
+
+/**
+ * Solves `(Φ/L + ρ diag(P_r)) w = θ/L`, with iterative refinement. Where the matrix is Toeplitz by Levinson's recursion
+ * or, above 8,192 taps, conjugate gradients; where it is large and has a shift structure by the generalised Schur
+ * algorithm; otherwise by Cholesky's method, which also stands in for the Schur algorithm up to 2,048 unknowns.
+ * Relative error of the taps about 1e-16 times the condition number.
  * @param inputs K
  * @param regularisation ρ
  */
 export function solve(system: NormalSystem, inputs: number, regularisation: number): Solution | Unsolvable {
-  const solver = prepare(system, regularisation);
-  if ('order' in solver) {
-    return {
-      order: solver.order,
-      conditionNumber: null,
-      smallestRegularisation: smallestRegularisation(system, regularisation),
-    };
+  let found = attempt(methodFor(system), system, regularisation);
+  const other = 'failed' in found ? standIn(found.failed, system.size) : null;
+  if (other !== null) found = attempt(other, system, regularisation);
+  if ('failed' in found) {
+    const { order, conditionNumber } = found;
+    return { order, conditionNumber, smallestRegularisation: smallestRegularisation(system, regularisation) };
   }
-  const condition = conditionOf(system, regularisation, solver.apply);
-  if (!(condition <= largestConditionNumber)) {
-    return {
-      order: null,
-      conditionNumber: condition,
-      smallestRegularisation: smallestRegularisation(system, regularisation),
-    };
-  }
-  const w = solver.apply(system.right);
-  const residual = multiply(system, regularisation, w);
-  for (let i = 0; i < system.size; i++) residual[i] = system.right[i] - residual[i];
-  const step = solver.apply(residual);
-  const taps = w.map((value, i) => (value + step[i]) / system.scale[i]);
+  const { solution, method, conditionNumber, factor } = found;
+  const taps = solution.map((value, i) => value / system.scale[i]);
   const length = system.size / inputs;
   return {
     coefficients: Array.from({ length: inputs }, (_, r) => taps.slice(r * length, (r + 1) * length)),
-    method: solver.method,
-    conditionNumber: condition,
-    factor: solver.factor,
+    method,
+    conditionNumber,
+    factor,
   };
 }
 
-interface Prepared {
-  method: Method;
-  apply: Operator;
-  factor: CholeskyFactor | null;
+/** The method that may still solve what another could not. */
+function standIn(failed: Failed['failed'], size: number): Method | null {
+  if (failed === 'gradients') return 'levinson';
+  return failed === 'schur' && size <= mostForCholesky ? 'cholesky' : null;
 }
 
-function prepare(system: NormalSystem, regularisation: number): Prepared | { order: number } {
-  const { matrix, size } = system;
-  if ('toeplitz' in matrix) {
-    const column = matrix.toeplitz.slice();
-    column[0] += regularisation;
-    const { order } = solveLevinson(column, system.right);
-    if (order < size) return { order };
-    return { method: 'levinson', apply: (b) => solveLevinson(column, b).solution, factor: null };
+type Solved = Omit<Solution, 'coefficients'> & { solution: Float64Array };
+
+interface Failed {
+  /** The method that failed, or that the matrix is too badly conditioned for any. */
+  failed: Method | 'condition';
+  order: number | null;
+  conditionNumber: number | null;
+}
+
+function attempt(method: Method, system: NormalSystem, regularisation: number): Solved | Failed {
+  const { size, right } = system;
+  const prepared = prepare(method, system, regularisation);
+  if ('order' in prepared) return { failed: method, order: prepared.order, conditionNumber: null };
+  const { multiply, inverse, roughInverse, refinements, factor } = prepared;
+  const enough = method === 'cholesky' ? 0 : settled;
+  const largest = largestEigenvalue(multiply, size, enough);
+  const conditionNumber = largest * largestEigenvalue(roughInverse, size, enough);
+  if (!(conditionNumber <= largestConditionNumber)) {
+    return { failed: method === 'gradients' ? method : 'condition', order: null, conditionNumber };
   }
-  const dense = matrix.dense.slice();
-  for (let i = 0; i < size; i++) dense[i * size + i] += regularisation;
-  const factor = factorCholesky(dense, size);
-  if ('order' in factor) return factor;
-  return { method: 'cholesky', apply: (b) => solveCholesky(factor, b), factor };
-}
-
-function conditionOf(system: NormalSystem, regularisation: number, solveWith: Operator): number {
-  return conditionNumber((v) => multiply(system, regularisation, v), solveWith, system.size);
-}
-
-function solvable(system: NormalSystem, regularisation: number): boolean {
-  const solver = prepare(system, regularisation);
-  return !('order' in solver) && conditionOf(system, regularisation, solver.apply) <= largestConditionNumber;
+  const { solution, residual } = refine(multiply, inverse, right, refinements);
+  if (method !== 'cholesky' && !(residual <= largestResidual * largest * norm(solution))) {
+    return { failed: method, order: null, conditionNumber };
+  }
+  return { solution, method, conditionNumber, factor };
 }
 
 /** By halving over the values 1, 2 and 5 times a power of ten, since what a larger one solves no smaller one spoils. */
@@ -101,11 +106,13 @@ function smallestRegularisation(system: NormalSystem, tooSmall: number): number 
   for (let power = -16; power <= 2; power++) {
     for (const digit of [1, 2, 5]) grid.push(Number(`${digit}e${power}`));
   }
+  // Conjugate gradients say nothing about what other methods can solve.
+  const method = methodFor(system) === 'gradients' ? 'levinson' : methodFor(system);
   let low = grid.findIndex((value) => value > tooSmall) - 1;
   let high = grid.length - 1;
   while (high - low > 1) {
     const middle = (low + high) >> 1;
-    if (solvable(system, grid[middle])) high = middle;
+    if ('solution' in attempt(method, system, grid[middle])) high = middle;
     else low = middle;
   }
   return grid[high];

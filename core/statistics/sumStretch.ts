@@ -1,5 +1,6 @@
 import type { Pace } from '../pace';
 import type { Interval } from '../pair/intervals';
+import { eachBlock } from '../pair/pieces';
 import type { SignalReader } from '../pair/signals';
 import { type BlockSpectra, blockFor, newBlockSpectra, newSpectrum, type Spectrum } from './blockSpectra';
 import { emptySums, type NormalSums } from './normalSums';
@@ -25,22 +26,22 @@ export async function sumStretch(
   const spectra = newBlockSpectra(inputs + 1, blockFor(length));
   const products = newProducts(inputs, spectra);
   const scratch = newSpectrum(spectra.transform.size);
-  const history = await read(stretch.from, stretch.from, length - 1);
-  spectra.push(history.inputs.map((samples) => atEnd(samples, spectra.block)));
+  const history = (await read(stretch.from, stretch.from, length - 1)).inputs.map((samples) =>
+    samples.slice(),
+  );
+  spectra.push(history.map((samples) => atEnd(samples, spectra.block)));
 
-  for (let from = stretch.from; from < stretch.to; from += spectra.block) {
-    const to = Math.min(stretch.to, from + spectra.block);
-    const { inputs: x, desired } = await read(from, to);
+  await eachBlock(read, stretch, spectra.block, 0, ({ inputs: x, desired }, _, to) => {
     spectra.push([...x, desired]);
     addProducts(products, spectra, scratch);
     for (let k = 0; k < desired.length; k++) sums.desiredEnergy += desired[k] * desired[k];
-    await pace.step('statistics', to - stretch.from, stretch.to - stretch.from);
-  }
+    return pace.step('statistics', to - stretch.from, stretch.to - stretch.from);
+  });
   finishProducts(products, spectra, sums);
 
   if (edges && length > 1) {
     const last = await read(stretch.to, stretch.to, length - 1);
-    sums.edges.push({ before: history.inputs.map(reversed), after: last.inputs.map(reversed) });
+    sums.edges.push({ before: history.map(reversed), after: last.inputs.map(reversed) });
   }
   return sums;
 }

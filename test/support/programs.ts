@@ -6,6 +6,7 @@ const probes = {
   sox: () => runs('sox', ['--version']),
   ffmpeg: () => runs('ffmpeg', ['-version']),
   scipy: () => runs('/usr/bin/python3', ['-c', 'import scipy.signal']),
+  pandas: () => runs('/usr/bin/python3', ['-c', 'import pandas']),
   gcc: () => runs('gcc', ['--version']),
   'g++': () => runs('g++', ['--version']),
   rustc: () => runs('rustc', ['--version']),

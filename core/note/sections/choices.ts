@@ -60,6 +60,7 @@ function delay({ document, sampleRate }: DesignResult): string {
 
 const solvers = {
   levinson: 'the Levinson recursion',
+  gradients: 'preconditioned conjugate gradients',
   schur: 'the generalised Schur algorithm',
   cholesky: 'Cholesky factorisation',
 };

@@ -2,6 +2,7 @@ import type { ByteSource } from '../../bytes/byteSource';
 import { grouped } from '../../figures/numbers';
 import { type Finding, finding } from '../../findings/finding';
 import { framedReader } from '../framedReader';
+import { openSafely } from '../openSafely';
 import type { Opened, Recording } from '../recording';
 import { type Dtype, dtypeOf } from './dtype';
 import { type NpyHeader, readHeader } from './header';
@@ -21,7 +22,11 @@ interface Layout {
  * Opens an NPY file (NumPy Enhancement Proposal 1) of one or two axes. Of two axes the longer one is time; where both are
  * equal the rows are samples. The file has no sample rate; whole numbers keep their own unit.
  */
-export async function openNpy(source: ByteSource, file: string): Promise<Opened> {
+export function openNpy(source: ByteSource, file: string): Promise<Opened> {
+  return openSafely(source, file, (whole) => open(whole, file));
+}
+
+async function open(source: ByteSource, file: string): Promise<Opened> {
   const refused = (found: Finding): Opened => ({ recording: null, findings: [found] });
   const header = await readHeader(source, file);
   if ('code' in header) return refused(header);
@@ -93,11 +98,11 @@ function planarReader(
   samples: number,
   { bytes, decode }: Dtype,
 ): Recording['read'] {
-  return async (channels, from, to) => {
+  return async (channels, from, to, into) => {
     const planes: Float64Array[] = [];
-    for (const channel of channels) {
+    for (const [c, channel] of channels.entries()) {
       const read = framedReader(source, file, start + channel * samples * bytes, bytes, bytes, decode);
-      planes.push(...(await read([0], from, to)));
+      planes.push(...(await read([0], from, to, into && [into[c]])));
     }
     return planes;
   };

@@ -26,6 +26,12 @@ export function splitCells(line: string, separator: Separator): string[] {
         else if (text[i + 1] === '"') cell += text[i++];
         else break;
       }
+      let next = i + 1;
+      while (separator !== ' ' && text[next] === ' ') next++;
+      const closed = next >= text.length || text[next] === separator || text[next] === '\t';
+      // Text after a closing quote is kept with the quotes, so that the cell is no number.
+      if (!closed) cell = `"${cell}"`;
+      quoted = closed;
     } else if (character === separator || (separator === ' ' && character === '\t')) {
       end();
       if (separator === ' ') while (text[i + 1] === ' ' || text[i + 1] === '\t') i++;

@@ -14,14 +14,17 @@ export interface Dialect {
   units: string[] | null;
   /** Lines before the first row, blank ones and comments included. */
   linesBefore: number;
-  /** First row, to tell how times are written. */
-  firstRow: string[];
+  /** First cells of the rows that were looked at, to tell how times are written. */
+  firstCells: string[];
 }
 
 const separators: readonly Separator[] = ['\t', ';', ',', ' '];
 
-/** Lines of the start that are looked at. */
-const mostLines = 300;
+/** Characters of numbers, dates, separators and quotes. */
+const mayBeRow = /^[\s\d+\-.,;:"eEdDnNaAiIfFtTyYzZ]*$/;
+
+/** Lines that are looked at together: from the start on, until some of them are rows. */
+const lookedAt = 300;
 
 /**
  * The dialect of a text from its start: the separator and decimal sign that make numbers of most lines, then of most
@@ -31,7 +34,14 @@ const mostLines = 300;
 export function findDialect(head: string, whole: boolean): Dialect | null {
   const lines = head.split(/\r\n|\n|\r/);
   if (!whole && lines.length > 1) lines.pop();
-  const looked = lines.slice(0, mostLines);
+  for (let end = lookedAt; ; end *= 4) {
+    const found = bestDialect(lines.slice(0, end));
+    if (found !== null || end >= lines.length) return found;
+  }
+}
+
+function bestDialect(looked: readonly string[]): Dialect | null {
+  if (!looked.some((line) => mayBeRow.test(line) && /\d/.test(line))) return null;
   let best: { dialect: Dialect; rows: number } | null = null;
   for (const decimal of ['.', ','] as const) {
     for (const separator of separators) {
@@ -55,32 +65,44 @@ function tryDialect(
   const split = lines.map((line) =>
     line.trim() === '' || isComment(line, separator) ? null : splitCells(line, separator),
   );
-  const numeric = split.map((cells) => cells !== null && isRow(cells, decimal));
-  const first = numeric.indexOf(true);
+  const numeric = split.map((cells, i) => cells !== null && mayBeRow.test(lines[i]) && isRow(cells, decimal));
+  const first = firstRowOf(split, numeric);
   if (first < 0) return null;
-  const firstRow = split[first] ?? [];
-  const width = firstRow.length;
-  const rows = split.filter((cells, i) => numeric[i] && cells?.length === width);
+  const width = split[first]?.length ?? 0;
   const header = split.slice(0, first);
+  // Rows that agree with a header in their commas are no decimal numbers.
+  if (decimal === ',' && width === 1 && header.some((cells) => cells?.[0].includes(','))) return null;
+  const rows = split.slice(first).filter((cells, i) => numeric[first + i] && cells?.length === width);
   // A separator at the end of every row starts no cell, unless the header names a column there.
   const open = separator !== ' ' && width > 1 && rows.every((cells) => cells?.[width - 1] === '');
   const named = header.some((cells) => cells?.length === width && cells[width - 1] !== '');
   const columns = open && !named ? width - 1 : width;
   const above = header.filter((cells) => cells !== null && fits(cells, columns));
-  const [names, units] = above.length > 1 ? above.slice(-2) : [above[0] ?? null, null];
-  const cut = (cells: string[] | null) => cells?.slice(0, columns) ?? null;
+  const cut = (cells: readonly string[] | null | undefined) => cells?.slice(0, columns) ?? null;
+  const last = above.at(-1);
+  const before = above.at(-2);
+  const units = last && before && isUnits(last) && !isRow(before.slice(0, columns), decimal);
   return {
     dialect: {
       separator,
       decimal,
       columns,
-      names: cut(names),
-      units: cut(units),
+      names: cut(units ? before : last),
+      units: cut(units ? last : null),
       linesBefore: first,
-      firstRow: firstRow.slice(0, columns),
+      firstCells: rows.map((cells) => cells?.[0] ?? ''),
     },
     rows: rows.length,
   };
+}
+
+/** The first row of numbers; one that only counts its columns after an empty cell is a header. */
+function firstRowOf(split: readonly (string[] | null)[], numeric: readonly boolean[]): number {
+  const first = numeric.indexOf(true);
+  const cells = split[first];
+  const counts = cells?.every((cell, c) => cell === (c === 0 ? '' : String(c - 1)));
+  const top = split.slice(0, first).every((line) => line === null);
+  return cells && cells.length > 1 && counts && top ? numeric.indexOf(true, first + 1) : first;
 }
 
 function fits(cells: readonly string[], columns: number): boolean {
@@ -94,13 +116,23 @@ function isRow(cells: readonly string[], decimal: '.' | ','): boolean {
     if (i === 0 && cells.length > 1 && isTimestamp(cell)) continue;
     const value = numberOf(cell, decimal);
     if (value === undefined) return false;
-    if (cell !== '' && /\d/.test(cell)) numbers++;
+    if (/\d/.test(cell)) numbers++;
   }
   return numbers > 0;
 }
 
+const unit =
+  /^[[(]?\s*(?:1|-|%|#|[kMGmunpµμ]?(?:s|sec|V|A|N|Pa|bar|g|m|Hz|W|J|K|T|l|L|Nm|Ohm|Ω|rad|dB|FS)|°?C|°?F|deg|°|min|h|psi|rpm|counts?|LSB|digits?)(?:\^?-?[0-9²³])?(?:[/*·.]\s*[kmµμ]?(?:s|m|min|h|V|A|rad|K)(?:\^?-?[0-9²³])?)?\s*[\])]?$/;
+
+/** A row of units has one that is known or in brackets, and no long words. */
+function isUnits(cells: readonly string[]): boolean {
+  const filled = cells.filter((cell) => cell !== '');
+  const known = filled.some((cell) => unit.test(cell) || /^[[(].*[\])]$/.test(cell));
+  return known && filled.every((cell) => cell.length <= 12);
+}
+
 function numberOf(cell: string, decimal: '.' | ','): number | undefined {
   if (/[^ -~]/.test(cell)) return undefined;
-  const bytes = new TextEncoder().encode(cell);
+  const bytes = new TextEncoder().encode(cell.trim());
   return parseNumber(bytes, 0, bytes.length, decimal.charCodeAt(0));
 }

@@ -42,6 +42,7 @@ export async function eachLine(
       }
       const secondHalf = byte === 10 && afterReturn && i === start;
       afterReturn = byte === 13;
+      if (i - start > longestLine) refuse('line-too-long', { limit: longestLine }, { file });
       if (!secondHalf && !visit(buffer, start, i, base + start)) return;
       start = i + 1;
     }

@@ -4,14 +4,14 @@ import type { ByteSource } from '../../bytes/byteSource';
 export interface TextSource {
   /** UTF-8 without its mark, or UTF-16 with every code unit beyond Latin-1 as `?`. */
   bytes: ByteSource;
-  /** The first 64 Ki characters or so. */
+  /** The first 256 Ki characters or so. */
   head: string;
   /** The head is all of the text. */
   whole: boolean;
   utf16: boolean;
 }
 
-const headLength = 65536;
+const headLength = 1 << 18;
 
 /** Tells UTF-8, with and without a mark, from UTF-16 with a mark or with zeros in every other byte. */
 export async function textSource(source: ByteSource): Promise<TextSource> {

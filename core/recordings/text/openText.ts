@@ -1,7 +1,9 @@
 import type { ByteSource } from '../../bytes/byteSource';
-import { type Finding, finding, Refusal, refuse } from '../../findings/finding';
+import { type Finding, finding, refuse } from '../../findings/finding';
 import type { Pace } from '../../pace';
+import { openSafely } from '../openSafely';
 import type { Opened, Recording } from '../recording';
+import { splitCells } from './cells';
 import { type Dialect, findDialect } from './dialect';
 import { eachLine } from './eachLine';
 import { type TextSource, textSource } from './encoding';
@@ -12,6 +14,7 @@ import {
   type Course,
   countsUp,
   type FirstColumn,
+  finestResolution,
   firstColumn,
   newCourse,
   rateOf,
@@ -28,12 +31,7 @@ const separatorNames = { '\t': 'tabs', ';': '";"', ',': '","', ' ': 'blanks' };
  * @param kept numbers kept in memory at most; tests make it small
  */
 export async function openText(source: ByteSource, file: string, pace: Pace, kept?: number): Promise<Opened> {
-  try {
-    return await open(source, file, pace, kept);
-  } catch (error) {
-    if (error instanceof Refusal) return { recording: null, findings: [...error.findings] };
-    throw error;
-  }
+  return openSafely(source, file, (whole) => open(whole, file, pace, kept));
 }
 
 async function open(source: ByteSource, file: string, pace: Pace, kept?: number): Promise<Opened> {
@@ -58,7 +56,9 @@ async function open(source: ByteSource, file: string, pace: Pace, kept?: number)
   await eachLine(text.bytes, 0, file, visit, (offset) => pace.step('reading', offset, text.bytes.size));
   if (store.rows < 2) refuse('too-short', { samples: store.rows }, { file });
 
-  const { leadsIn, rate, findings } = judgeFirst(first, course, file);
+  const lastCells =
+    first.kind === 'channel' ? [] : await store.lastLines((line) => splitCells(line, dialect.separator)[0]);
+  const { leadsIn, rate, findings } = judgeFirst(withCoarsest(first, lastCells, dialect), course, file);
   const channels = Array.from(
     { length: dialect.columns - (leadsIn ? 1 : 0) },
     (_, c) => c + (leadsIn ? 1 : 0),
@@ -71,11 +71,12 @@ async function open(source: ByteSource, file: string, pace: Pace, kept?: number)
     sampleRate: rate,
     samples: store.rows,
     channels: channels.map((column) => dialect.names?.[column]?.trim() || null),
-    read: (asked, from, to) =>
+    read: (asked, from, to, into) =>
       store.read(
         asked.map((channel) => channels[channel]),
         from,
         to,
+        into,
       ),
   };
   return { recording: findings.some((f) => f.severity === 'blocker') ? null : recording, findings };
@@ -106,6 +107,14 @@ function refuseRow(problem: RowProblem, { columns }: Dialect, file: string, line
   }
   const cell = problem.cell.length > 40 ? `${problem.cell.slice(0, 40)}…` : problem.cell;
   refuse('not-a-number-cell', { column: problem.column + 1, cell }, { file, line });
+}
+
+/** Times can be printed more coarsely at the end than at the start. */
+function withCoarsest(first: FirstColumn, lastCells: readonly string[], { decimal }: Dialect): FirstColumn {
+  if (first.kind !== 'time' && first.kind !== 'perhaps-time') return first;
+  const unit = first.kind === 'time' ? first.unit : 1;
+  const last = unit * finestResolution(lastCells, decimal);
+  return Number.isFinite(last) ? { ...first, resolution: Math.max(first.resolution, last) } : first;
 }
 
 /** Whether the first column is no channel, and the rate that it tells. */

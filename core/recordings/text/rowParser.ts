@@ -28,7 +28,7 @@ export function newRowParser(dialect: Dialect, stamps: boolean): RowParser {
   const separator = dialect.separator.charCodeAt(0);
   const decimal = dialect.decimal.charCodeAt(0);
   const blanks = separator === blank;
-  const epoch = stamps ? (parseTimestamp(dialect.firstRow[0])?.seconds ?? 0) : 0;
+  const epoch = stamps ? (parseTimestamp(dialect.firstCells[0])?.seconds ?? 0) : 0;
   const isBlank = (byte: number) => byte === blank || (byte === tab && (blanks || separator !== tab));
 
   function value(bytes: Uint8Array, start: number, end: number, column: number): number | undefined {
@@ -55,7 +55,8 @@ export function newRowParser(dialect: Dialect, stamps: boolean): RowParser {
         while (last > from && isBlank(bytes[last - 1])) last--;
         while (from < last && isBlank(bytes[from])) from++;
         const number = value(bytes, from, last, column);
-        if (number === undefined) return { kind: 'cell', column, cell: textOf(bytes, from, last) };
+        if (number === undefined)
+          return { kind: 'cell', column, cell: textOf(bytes, from, Math.min(last, from + 200)) };
         row[column] = number;
       } else if (column > columns || to > from) return { kind: 'ragged', got: countCells(bytes, start, end) };
       column++;
@@ -97,5 +98,5 @@ function startsComment(bytes: Uint8Array, start: number, end: number, separator:
 }
 
 function textOf(bytes: Uint8Array, start: number, end: number): string {
-  return new TextDecoder().decode(bytes.subarray(start, Math.min(end, start + 4096)));
+  return new TextDecoder().decode(bytes.subarray(start, end));
 }

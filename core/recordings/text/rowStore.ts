@@ -1,5 +1,6 @@
 import type { ByteSource } from '../../bytes/byteSource';
 import { refuse } from '../../findings/finding';
+import { planesFor } from '../framedReader';
 import { eachLine } from './eachLine';
 import type { RowParser } from './rowParser';
 
@@ -15,8 +16,15 @@ export interface RowStore {
   add(row: Float64Array, offset: number): void;
   /** Rows added. */
   readonly rows: number;
+  /** What `pick` makes of each of the last rows' lines, some thousands at most. */
+  lastLines(pick: (line: string) => string): Promise<string[]>;
   /** Rows `[from, to)` of the columns asked for. @throws Refusal `file-changed` */
-  read(columns: readonly number[], from: number, to: number): Promise<Float64Array[]>;
+  read(
+    columns: readonly number[],
+    from: number,
+    to: number,
+    into?: readonly Float64Array[],
+  ): Promise<Float64Array[]>;
 }
 
 /**
@@ -62,8 +70,19 @@ export function newRowStore(
     get rows() {
       return rows;
     },
-    async read(columns, from, to) {
-      const planes = columns.map(() => new Float64Array(to - from));
+    async lastLines(pick) {
+      const found: string[] = [];
+      const row = new Float64Array(width);
+      const from = offsets[Math.max(0, offsets.length - 2)];
+      await eachLine(source, from, file, (bytes, start, end) => {
+        const line = bytes.subarray(start, end);
+        if (parse(bytes, start, end, row) === 'row') found.push(pick(new TextDecoder().decode(line)));
+        return true;
+      });
+      return found;
+    },
+    async read(columns, from, to, into) {
+      const planes = planesFor(columns.length, to - from, into);
       const take = (row: Float64Array, at: number, start = 0) => {
         for (let c = 0; c < columns.length; c++) planes[c][at - from] = row[start + columns[c]];
       };

@@ -11,7 +11,7 @@ export type FirstColumn =
   | { kind: 'channel' };
 
 const timeName =
-  /^(rel(ative)? ?)?(time|zeit|temps|tiempo|tempo|t|timestamp|time ?stamp|date ?time|elapsed|uptime|seconds?|sec|s|millis(econds?)?|msec|ms|micros(econds?)?|usec|us|µs|nanos(econds?)?|ns|minutes?|min)$/i;
+  /^((rel(ative)?|elapsed) ?)?(time|zeit|temps|tiempo|tempo|t|timestamp|time ?stamp|date ?time|elapsed|uptime|seconds?|sec|s|millis(econds?)?|msec|ms|micros(econds?)?|usec|us|µs|nanos(econds?)?|ns|minutes?|min)$/i;
 const indexName = /^(samples?|sample ?(no|nr|number|index)|index|idx|n|i|no|nr|#|row|count|number)?$/i;
 
 /** Seconds of a unit as headers write it. */
@@ -29,11 +29,10 @@ const units: [RegExp, number][] = [
  * so or has no name and counts up by one from 0 or 1. Without a name it is also time where it rises by even steps. A
  * column with another name is a channel, however it runs, and so is an only column: a measured ramp must not be eaten.
  */
-export function firstColumn({ columns, names, units: unitRow, firstRow, decimal }: Dialect): FirstColumn {
+export function firstColumn({ columns, names, units: unitRow, firstCells, decimal }: Dialect): FirstColumn {
   if (columns < 2) return { kind: 'channel' };
-  const cell = firstRow[0];
-  const resolution = resolutionOf(cell, decimal);
-  if (isTimestamp(cell)) return { kind: 'time', unit: 1, resolution, stamps: true };
+  const resolution = finestResolution(firstCells, decimal);
+  if (isTimestamp(firstCells[0])) return { kind: 'time', unit: 1, resolution, stamps: true };
   const name = names?.[0] ?? '';
   const { bare, unit } = parts(name);
   if (bare !== '' && timeName.test(bare)) {
@@ -46,7 +45,7 @@ export function firstColumn({ columns, names, units: unitRow, firstRow, decimal 
 
 /** `Time [ms]`, `time (ms)`, `time/ms` and `time_ms` as name and unit. */
 function parts(name: string): { bare: string; unit: string } {
-  const match = /^(.*?)\s*(?:[[(/]\s*([^\])]*?)\s*[\])]?|[_ ]([a-zµμ]{1,3}))$/i.exec(name.trim());
+  const match = /^(.*?)\s*(?:[[(/]\s*([^\])]*?)\s*[\])]?|[_ ]([a-zµμ]{1,8}))$/i.exec(name.trim());
   const unit = match?.[2] ?? match?.[3] ?? '';
   if (match === null || match[1] === '' || unitOf(unit) === null) return { bare: name.trim(), unit: '' };
   return { bare: match[1].trim(), unit };
@@ -57,7 +56,11 @@ function unitOf(text: string): number | null {
   return units.find(([pattern]) => pattern.test(bare))?.[1] ?? null;
 }
 
-/** What the last printed digit of a time stands for. */
+/** What the last printed digit stands for in the cell that has most of them: programs leave out final zeros. */
+export function finestResolution(cells: readonly string[], decimal: string): number {
+  return Math.min(...cells.filter((cell) => cell !== '').map((cell) => resolutionOf(cell, decimal)));
+}
+
 function resolutionOf(cell: string, decimal: string): number {
   const sign = isTimestamp(cell) ? /[.,](\d+)/ : new RegExp(`[${decimal}](\\d*)`);
   const places = sign.exec(cell)?.[1].length ?? 0;
@@ -75,6 +78,8 @@ export interface Course {
   /** Row after the smallest and the largest step, from 0. */
   smallestAt: number;
   largestAt: number;
+  /** First row whose value is missing or infinite; null where all are there. */
+  brokenAt: number | null;
 }
 
 export function newCourse(): Course {
@@ -86,19 +91,25 @@ export function newCourse(): Course {
     largestStep: Number.NEGATIVE_INFINITY,
     smallestAt: 0,
     largestAt: 0,
+    brokenAt: null,
   };
 }
 
-/** Adds the next value, NaN included: a time that is no number is a step of NaN, which no check lets pass. */
+/** Adds the next value. */
 export function addToCourse(course: Course, value: number): void {
+  if (value - value !== 0) {
+    course.brokenAt ??= course.rows;
+    course.rows++;
+    return;
+  }
   if (course.rows === 0) course.first = value;
   else {
     const step = value - course.last;
-    if (!(step >= course.smallestStep)) {
+    if (step < course.smallestStep) {
       course.smallestStep = step;
       course.smallestAt = course.rows;
     }
-    if (!(step <= course.largestStep)) {
+    if (step > course.largestStep) {
       course.largestStep = step;
       course.largestAt = course.rows;
     }
@@ -108,8 +119,8 @@ export function addToCourse(course: Course, value: number): void {
 }
 
 /** Whether every value of a column is one more than that before. */
-export function stepsByOne({ smallestStep, largestStep }: Course): boolean {
-  return smallestStep === 1 && largestStep === 1;
+export function stepsByOne({ smallestStep, largestStep, brokenAt }: Course): boolean {
+  return brokenAt === null && smallestStep === 1 && largestStep === 1;
 }
 
 /** Whether a column counts 0, 1, 2 … or 1, 2, 3 …. */
@@ -117,40 +128,47 @@ export function countsUp(course: Course): boolean {
   return (course.first === 0 || course.first === 1) && stepsByOne(course);
 }
 
+/** Doubles tell times apart no better than by this part of them, however many digits are printed. */
+export const doubleRounding = 4.5e-16;
+
 /** Whether a column rises by steps that are even to the last printed digit. */
-export function risesEvenly({ smallestStep, largestStep }: Course, resolution: number): boolean {
+export function risesEvenly(course: Course, printed: number): boolean {
+  const { smallestStep, largestStep, brokenAt, first, last } = course;
+  const resolution = Math.max(printed, doubleRounding * Math.max(Math.abs(first), Math.abs(last)));
   return (
-    smallestStep > 0 && largestStep - smallestStep <= 2.001 * resolution && largestStep < 1.5 * smallestStep
+    brokenAt === null &&
+    smallestStep > 0 &&
+    largestStep - smallestStep <= 2.001 * resolution &&
+    largestStep < 1.5 * smallestStep
   );
 }
 
 /**
  * The sample rate of a time column and what is wrong with it. Times are in seconds.
- * @param resolution what the last printed digit stands for, in seconds
+ * @param printed what the last printed digit stands for, in seconds
  */
 export function rateOf(
   course: Course,
-  resolution: number,
+  printed: number,
   file: string,
 ): { rate: number | null; findings: Finding[] } {
   const span = course.last - course.first;
+  // Steps that are all alike far below the last digit that is seen have more digits, all of them zeros.
+  const spread = course.largestStep - course.smallestStep;
+  const rounding = doubleRounding * Math.max(Math.abs(course.first), Math.abs(course.last));
+  const resolution = Math.max(rounding, spread <= 1e-3 * printed ? spread : printed);
   const period = span / (course.rows - 1);
   const place = (at: number) => ({ file, from: at, to: at + 1 });
   const micros = (seconds: number) => `${significant(seconds * 1e6)} µs`;
   const blocker = (what: string, at: number, cure: string): { rate: null; findings: Finding[] } => ({
     rate: null,
-    findings: [finding('uneven-time', { what, rate: '(unknown)', cure }, place(at), 'blocker')],
+    findings: [finding('uneven-time', { what, cure }, place(at), 'blocker')],
   });
-  const { smallestStep, largestStep, smallestAt, largestAt } = course;
-  if (Number.isNaN(smallestStep) || Number.isNaN(largestStep) || !(period > 0)) {
-    const at = Number.isNaN(smallestStep) ? smallestAt : largestAt;
-    return blocker(
-      'a time is missing or the times do not rise',
-      at,
-      'Mend the column, or remove it and give "sampleRate".',
-    );
-  }
-  const rate = roundest(1 / period, Math.min(0.01, (1.5 * resolution) / span));
+  const { smallestStep, largestStep, smallestAt, largestAt, brokenAt } = course;
+  const mend = 'Mend the column, or remove it and give "sampleRate".';
+  if (brokenAt !== null) return blocker(`the time at sample ${brokenAt} is missing`, brokenAt, mend);
+  if (!(period > 0)) return blocker('the times do not rise', smallestAt, mend);
+  const rate = roundest(1 / period, Math.min(0.01, resolution / span));
   if (smallestStep < 0) {
     return blocker(
       `it steps back by ${micros(-smallestStep)} at sample ${smallestAt}`,
@@ -167,7 +185,9 @@ export function rateOf(
     );
   }
   if (largestStep > 1.5 * period + 1.001 * resolution) {
-    const lost = significant(largestStep * rate - 1, 3);
+    // The gap itself stretches the mean period.
+    const usual = course.rows > 2 ? (span - largestStep) / (course.rows - 2) : period;
+    const lost = significant(largestStep / usual - 1, 3);
     return blocker(
       `a gap of ${micros(largestStep)} before sample ${largestAt}, ${lost} samples too long`,
       largestAt,
@@ -177,11 +197,8 @@ export function rateOf(
   const uneven = Math.max(largestStep - period, period - smallestStep);
   if (uneven <= Math.max(2.001 * resolution, 1e-3 * period)) return { rate, findings: [] };
   const what = `steps of ${micros(smallestStep)} to ${micros(largestStep)} about ${micros(period)}, up to ${significant(uneven * rate, 2)} of a sample off`;
-  const cure = 'Take the samples by a timer, or bring the recording to even steps first.';
-  return {
-    rate,
-    findings: [finding('uneven-time', { what, rate: significant(rate, 8), cure }, place(smallestAt))],
-  };
+  const cure = `The filter takes the samples as evenly spaced at ${significant(rate, 8)} Hz. Take them by a timer, or bring the recording to even steps first.`;
+  return { rate, findings: [finding('uneven-time', { what, cure }, place(smallestAt))] };
 }
 
 /** The number of fewest digits within a relative distance: rates are round, printed times are not. */

@@ -23,6 +23,7 @@ export function parseTimestamp(cell: string): Timestamp | undefined {
     day < 1 ||
     day > daysIn(year, month) ||
     hour > 24 ||
+    (hour === 24 && (minute > 0 || second > 0 || Number(match[7] ?? 0) > 0)) ||
     minute > 59 ||
     second > 60
   ) {

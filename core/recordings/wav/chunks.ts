@@ -18,16 +18,16 @@ export interface Chunks {
   findings: Finding[];
 }
 
-/** Sizes that writers to a pipe leave, who cannot go back and fill them in. */
-const unknownSize = 0xffffffff;
+/** Sizes that writers to a pipe leave, who cannot go back and fill them in: the largest, or the largest of whole blocks. */
+const unknownSizes = [0xffffffff, 0x7ffff000, 0x7fffffff];
 
 /** Chunks looked at before the file is given up: no writer makes more before its data. */
 const mostChunks = 10_000;
 
 /**
  * Walks the chunks of a RIFF (Microsoft & IBM 1991), RF64 or BW64 file (EBU Tech 3306, ITU-R BS.2088) up to and past the
- * data. Sizes are clamped to the bytes that are there. A data chunk that declares 0 or 0xFFFFFFFF bytes reaches to the
- * end of the file.
+ * data. Sizes are clamped to the bytes that are there. A data chunk that declares 0 bytes, or a size that stands for one
+ * not known, reaches to the end of the file.
  */
 export async function findChunks(source: ByteSource, file: string): Promise<Chunks> {
   const found: Chunks = { format: null, data: null, findings: [] };
@@ -37,10 +37,10 @@ export async function findChunks(source: ByteSource, file: string): Promise<Chun
     const id = idOf(head);
     let declared = head.getUint32(4, true);
     const from = at + 8;
-    if (id === 'ds64' && source.size - from >= 16)
+    if (id === 'ds64' && declared >= 16 && source.size - from >= 16)
       wideDataSize = wide(viewOf(await source.read(from, 16)), 8);
     if (id === 'data') {
-      if (declared === unknownSize && wideDataSize !== null) declared = wideDataSize;
+      if (declared === 0xffffffff && wideDataSize !== null) declared = wideDataSize;
       found.data = dataChunk(source, file, from, declared, found.findings);
       // Chunks after the data matter only where the format is still missing.
       if (found.format !== null) return found;
@@ -62,7 +62,7 @@ function dataChunk(
   findings: Finding[],
 ): Chunk {
   const there = source.size - from;
-  const open = declared === unknownSize || (declared === 0 && there > 0);
+  const open = (declared > there && unknownSizes.includes(declared)) || (declared === 0 && there > 0);
   if (open) {
     findings.push(finding('open-data', { declared, there }, { file }));
     return { id: 'data', from, size: there, declared: there };

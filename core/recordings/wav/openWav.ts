@@ -1,6 +1,7 @@
 import type { ByteSource } from '../../bytes/byteSource';
 import { type Finding, finding } from '../../findings/finding';
 import { framedReader } from '../framedReader';
+import { openSafely } from '../openSafely';
 import type { Opened } from '../recording';
 import { type Chunk, findChunks } from './chunks';
 import { decoders } from './decode';
@@ -10,7 +11,11 @@ import { formatInWords, readFormat, type WavFormat } from './format';
  * Opens a RIFF/WAVE, RF64 or BW64 file: PCM of 8 to 32 bits, floats of 32 and 64 bits, A-law and µ-law, plain or extensible
  * header, any number of channels, files of any size. PCM, A-law and µ-law amplitudes are -1..1.
  */
-export async function openWav(source: ByteSource, file: string): Promise<Opened> {
+export function openWav(source: ByteSource, file: string): Promise<Opened> {
+  return openSafely(source, file, (whole) => open(whole, file));
+}
+
+async function open(source: ByteSource, file: string): Promise<Opened> {
   const start = String.fromCharCode(...(await source.read(0, Math.min(12, source.size))));
   if (start.startsWith('RIFX'))
     return refused(finding('unsupported-codec', { what: 'RIFX, whose numbers are big-endian' }, { file }));
@@ -56,6 +61,7 @@ function recordingOf(
     file,
     format: formatInWords(format),
     pcm: !format.codec.startsWith('float'),
+    ...(format.codec.startsWith('pcm') ? { bits: format.validBits ?? 8 * format.sampleBytes } : {}),
     lineEndsIgnored: false,
     sampleRate: format.sampleRate,
     samples,
