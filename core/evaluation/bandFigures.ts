@@ -16,21 +16,31 @@ const bands = 16;
  */
 export function bandFigures(spectra: SpectraFigures): BandFigure[] {
   if (spectra.averages === 0) return [];
-  const last = spectra.frequencies.length - 1;
+  const before = bandSums(spectra.desired);
+  const after = bandSums(spectra.error);
+  return bandEdges(spectra.frequencies).map(({ from, to }, b) => ({
+    from,
+    to,
+    reductionDb: powerDecibels(before[b] / after[b]),
+  }));
+}
+
+/** The same bands by their edges. @param frequencies of a spectrum: a multiple of 16 and one more */
+export function bandEdges(frequencies: Float64Array): { from: number; to: number }[] {
+  const width = (frequencies.length - 1) / bands;
+  return Array.from({ length: bands }, (_, b) => ({
+    from: frequencies[b * width],
+    to: frequencies[(b + 1) * width],
+  }));
+}
+
+/** Sums of a spectrum's values over the same bands. */
+export function bandSums(values: Float64Array): number[] {
+  const width = (values.length - 1) / bands;
   return Array.from({ length: bands }, (_, b) => {
-    const start = (b * last) / bands;
-    const end = ((b + 1) * last) / bands;
-    let before = 0;
-    let after = 0;
+    let sum = 0;
     // Half open, so that no bin counts twice; the last band takes the bin at half the sample rate too.
-    for (let f = start; f < end + (b === bands - 1 ? 1 : 0); f++) {
-      before += spectra.desired[f];
-      after += spectra.error[f];
-    }
-    return {
-      from: spectra.frequencies[start],
-      to: spectra.frequencies[end],
-      reductionDb: powerDecibels(before / after),
-    };
+    for (let f = b * width; f < (b + 1) * width + (b === bands - 1 ? 1 : 0); f++) sum += values[f];
+    return sum;
   });
 }

@@ -1,3 +1,4 @@
+import type { BandFilter } from '../pair/bandFilter';
 import type { Means } from '../pair/signals';
 
 /** A filter ready to be run over recordings. */
@@ -8,6 +9,8 @@ export interface Filter {
   delay: number;
   /** Taken off before it runs. */
   means: Means;
+  /** The band that the error is weighted to; none: all frequencies count alike. The filter itself runs on the raw signal. */
+  band?: BandFilter | null;
 }
 
 /** M, taps per input. */

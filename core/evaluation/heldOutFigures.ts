@@ -32,7 +32,7 @@ export interface SpectraFigures {
 export interface Evaluation {
   /** In the band that the error is weighted to, as all figures but the next and the spectra. */
   total: ErrorFigure;
-  /** NMSE of what lies outside that band, in dB; null where all frequencies count alike. */
+  /** NMSE of what lies outside that band, in dB; null where there is nothing outside. */
   outsideBandDb: number | null;
   takes: TakeFigure[];
   spectra: SpectraFigures;
@@ -70,9 +70,10 @@ export async function evaluate(
   const frequencies = desired.map((_, f) => (f * sampleRate) / segment);
   return {
     total,
-    outsideBandDb: filter.band
-      ? errorFigure(outside.samples, outside.errorEnergy, outside.desiredEnergy).nmseDb
-      : null,
+    outsideBandDb:
+      filter.band && outside.desiredEnergy > 0
+        ? errorFigure(outside.samples, outside.errorEnergy, outside.desiredEnergy).nmseDb
+        : null,
     takes,
     spectra: { segment, averages: welch.averages, frequencies, desired, output, error },
     target: targetTally.figures(total, desiredEnergy),

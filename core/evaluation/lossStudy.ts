@@ -10,6 +10,7 @@ import { filterStretch } from './filterStretch';
 import { errorFigure } from './fitFigure';
 import type { Run } from './measuredRuns';
 import { type LossFigures, newTargetTally } from './targetTally';
+import { newWeighing } from './weighing';
 
 /** One block as a variant sees it; every input begins with M-1 samples of history. */
 export interface StudyBlock {
@@ -46,6 +47,7 @@ export async function studyVariants(
   pace: Pace,
 ): Promise<Study> {
   const ideal = newErrorTally(1, 1);
+  const weighing = newWeighing(filter.band);
   const tallies = variants.map(newTargetTally);
   const total = runs.reduce((sum, run) => sum + run.samples, 0);
   const history = filterLength(filter) - 1;
@@ -54,13 +56,17 @@ export async function studyVariants(
     const none = { inputs: take.inputs.map(() => 0), desired: 0 };
     const readRaw = signalReader(take, { means: none, delay: filter.delay });
     for (const stretch of spread(segments, Math.ceil((studySamples * samples) / total))) {
-      await filterStretch(read, stretch, filter.coefficients, pace, async (block) => {
+      await filterStretch(read, weighing.begin(stretch), filter.coefficients, pace, async (block) => {
         const { from, desired, output, inputs } = block;
         const raw = await readRaw(from, from + desired.length, history);
         const counts = raw.inputs.map((x, r) => targetInput(target, r, x));
-        ideal.add(desired, output);
-        variants.forEach((variant, v) => {
-          tallies[v].add(desired, output, variant({ inputs, counts, output }), target.scaling.outputCount);
+        const outputs = variants.map((variant) => variant({ inputs, counts, output }));
+        const weighed = weighing.push([desired, output, ...outputs]);
+        if (weighed === null) return;
+        const [d, y, ...written] = weighed.inside;
+        ideal.add(d, y);
+        written.forEach((row, v) => {
+          tallies[v].add(d, y, row, target.scaling.outputCount);
         });
       });
     }

@@ -46,7 +46,8 @@ export function runsOver(
 ): Run[] {
   return takes
     .map((take) => {
-      const segments = usedSegments(take, intervals(take), filterLength(filter), filter.delay);
+      const history = filter.band?.history ?? 0;
+      const segments = usedSegments(take, intervals(take), filterLength(filter), filter.delay, history);
       return { take, segments, samples: totalLength(segments) };
     })
     .filter((run) => run.samples > 0);

@@ -1,3 +1,4 @@
+import type { Symmetry } from '../document/pairingDocument';
 import type { DesignResult } from '../pipeline/designResult';
 import { numberType } from './numberTypes';
 import { signalWords } from './signalWords';
@@ -22,7 +23,7 @@ export function filterCost(result: DesignResult): FilterCost {
   const { length, delay, symmetry } = document.filter;
   const { word, cyclesPerMac } = document.arithmetic;
   const words = signalWords(document);
-  const macs = inputs.length * products(length, symmetry);
+  const macs = macsPerSample(inputs.length, length, symmetry);
   const lag = document.job === 'predict' ? 0 : Math.max(0, -delay);
   const ahead = document.job === 'cancel' ? Math.max(0, delay) : 0;
   const inputBytes = numberType(words.input).bytes;
@@ -37,8 +38,12 @@ export function filterCost(result: DesignResult): FilterCost {
   };
 }
 
-/** Mirrored taps share a multiplication; the middle one of antisymmetric taps is 0. */
-function products(length: number, symmetry: DesignResult['document']['filter']['symmetry']): number {
-  if (symmetry === 'none') return length;
-  return symmetry === 'even' ? (length + 1) >> 1 : length >> 1;
+/**
+ * Multiply-accumulates of a sample. Mirrored taps share a multiplication; the middle one of antisymmetric taps is 0.
+ * @param inputs K
+ * @param length M
+ */
+export function macsPerSample(inputs: number, length: number, symmetry: Symmetry): number {
+  if (symmetry === 'none') return inputs * length;
+  return inputs * (symmetry === 'even' ? (length + 1) >> 1 : length >> 1);
 }

@@ -3,8 +3,10 @@ import type { Finding } from '../findings/finding';
 import { say } from '../findings/say';
 import type { DesignResult, ErrorFigure, HeldOutFigures, TakeSummary } from '../pipeline/designResult';
 import { arithmeticJson } from './arithmeticJson';
+import { confidenceJson, residualsJson } from './confidenceJson';
 import { filterCost } from './filterCost';
 import { type Mark, markText } from './generatedMark';
+import { inspectionJson } from './inspectionJson';
 import { type Json, jsonText } from './jsonText';
 import { openSelfDigest } from './selfDigest';
 import { shapeJson, wordsJson } from './wordsJson';
@@ -53,9 +55,12 @@ export function resultJson(result: DesignResult): { [key: string]: Json } {
     means: { inputs: [...result.means.inputs], desired: result.means.desired },
     inputPowers: [...result.inputPowers],
     fit: figure(result.fit),
-    heldOut: result.heldOut && heldOut(result.heldOut),
+    heldOut: result.heldOut && heldOut(result.heldOut, result.inspection),
     method: result.method,
     conditionNumber: result.conditionNumber,
+    confidence: confidenceJson(result),
+    residuals: residualsJson(result),
+    inspection: inspectionJson(result.inspection),
     arithmetic: arithmeticJson(result),
     shape: shapeJson(result.shape),
     words: wordsJson(result),
@@ -83,15 +88,18 @@ function figure({ samples, mse, nmseDb }: ErrorFigure): { [key: string]: Json } 
   return { samples, mse, nmseDb: roundedDecibels(nmseDb) };
 }
 
-function heldOut(figures: HeldOutFigures): Json {
+function heldOut(figures: HeldOutFigures, inspection: DesignResult['inspection']): Json {
+  const attainable = inspection?.attainable;
   return {
     ...figure(figures),
+    outsideBandDb: roundedDecibels(figures.outsideBandDb),
     disturbanceOnly: figures.disturbanceOnly,
-    bands: figures.bands.map(({ from, to, reductionDb }) => ({
+    attainableDb: roundedDecibels(attainable?.attainableDb),
+    bands: figures.bands.map(({ from, to, reductionDb }, b) => ({
       from,
       to,
       reductionDb: roundedDecibels(reductionDb),
-      attainableDb: null,
+      attainableDb: roundedDecibels(attainable?.bandsDb[b]),
     })),
     takes: figures.takes.map((of) => ({
       name: of.name,

@@ -70,8 +70,12 @@ export const designSentences = table({
     severity: 'note',
     says: 'the integers have a gain of {got} at {frequency} Hz when {expected} is fixed: {why}.',
   },
-  'band-unsupported': {
+  'band-beyond-rate': {
     severity: 'blocker',
-    says: 'prepare.band is set, and weighting the error to a band is not available yet; expected null.',
+    says: 'the band ends at {to} Hz when expected at most {limit} Hz, half the sample rate.',
+  },
+  'band-too-narrow': {
+    severity: 'blocker',
+    says: 'a filter for the band {from} Hz to {to} Hz would take {taps} taps when expected at most {limit}: {what} asks for them. Widen the band, or let it begin at 0 Hz or end at half the sample rate.',
   },
 });

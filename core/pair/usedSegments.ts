@@ -8,6 +8,7 @@ import { inputSamples, type Take } from './take';
  * @param wanted intervals of the take, sorted
  * @param length filter length M
  * @param delay Δ in samples
+ * @param history samples before all of these that must exist as well, of every signal: what a band filter looks back on
  * @returns sorted runs of n, none empty
  */
 export function usedSegments(
@@ -15,6 +16,7 @@ export function usedSegments(
   wanted: readonly Interval[],
   length: number,
   delay: number,
+  history = 0,
 ): Interval[] {
   const listed = [...take.fit, ...take.heldOut].sort((a, b) => a.from - b.from);
   const end = Math.max(inputSamples(take), take.desired.recording.samples);
@@ -23,8 +25,10 @@ export function usedSegments(
   const inputRuns = intersect(complement(gaps, end), [{ from: 0, to: inputSamples(take) }]);
   const desiredRuns = intersect(complement(gaps, end), [{ from: 0, to: take.desired.recording.samples }]);
   const withInput = inputRuns
-    .map(({ from, to }) => ({ from: from + length - 1, to }))
+    .map(({ from, to }) => ({ from: from + length - 1 + history, to }))
     .filter(({ from, to }) => to > from);
-  const withDesired = desiredRuns.map(({ from, to }) => ({ from: from + delay, to: to + delay }));
+  const withDesired = desiredRuns
+    .map(({ from, to }) => ({ from: from + delay + history, to: to + delay }))
+    .filter(({ from, to }) => to > from);
   return intersect(intersect(wanted, withInput), withDesired);
 }

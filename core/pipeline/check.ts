@@ -43,7 +43,7 @@ export async function check(host: Host, text: string, place: DocumentPlace): Pro
     const fit = await fitPair(read.pairing, host.pace);
     const different = compareTaps(fit, written.taps, written.file);
     const target = writtenTarget(read.pairing, fit, written.taps);
-    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings);
+    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings, null);
     different.push(...compareFigures(result, written.taps, written.file));
     const failed = different.length > 0 || result.findings.some((f) => f.code === 'over-limit');
     return {

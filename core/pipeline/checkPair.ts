@@ -4,18 +4,20 @@ import type { Moments } from '../pair/moments';
 import type { Take, Track } from '../pair/take';
 import { usedSegments } from '../pair/usedSegments';
 import { channelLabel } from '../recordings/recording';
+import { askedBand } from './askedBand';
 import type { Pairing } from './pairing';
 
 /** Unknowns above which the dense normal matrix would not fit in memory. */
 const mostUnknowns = 8192;
 
 /** Blockers that can be told before anything is computed. */
-export function checkPair({ document, takes, recordings }: Pairing): Finding[] {
+export function checkPair(pairing: Pairing): Finding[] {
+  const { document, takes, recordings } = pairing;
   const { length, delay } = document.filter;
   const findings: Finding[] = [];
-  if (document.prepare.band !== null) {
-    findings.push(finding('band-unsupported', {}, { path: ['prepare', 'band'] }));
-  }
+  const band = askedBand(pairing);
+  if (band !== null && 'severity' in band) findings.push(band);
+  const history = band !== null && 'history' in band ? band.history : 0;
   const unknowns = length * takes[0].inputs.length;
   if (unknowns > mostUnknowns) {
     findings.push(
@@ -23,7 +25,7 @@ export function checkPair({ document, takes, recordings }: Pairing): Finding[] {
     );
   }
   const samples = takes.reduce(
-    (sum, take) => sum + totalLength(usedSegments(take, take.fit, length, delay)),
+    (sum, take) => sum + totalLength(usedSegments(take, take.fit, length, delay, history)),
     0,
   );
   if (samples < unknowns) {

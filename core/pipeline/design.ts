@@ -9,11 +9,13 @@ import { overflowFindings } from '../numbers/overflowFindings';
 import { type TargetFilter, targetInput } from '../numbers/targetFilter';
 import { type TestVectors, testVectors } from '../numbers/testVectors';
 import { signalReader } from '../pair/signals';
+import { unprovenGain } from '../suitability/pair/unprovenGain';
 import { arithmeticResult } from './arithmeticResult';
 import { confidenceOf } from './confidence';
 import type { DesignResult } from './designResult';
 import { type Fit, fitPair } from './fitPair';
 import type { Host } from './host';
+import { inspectPair, type PairInspection } from './inspectPair';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
 import { gainFindings, shapeResult } from './shapeResult';
 import { studyWords } from './studyWords';
@@ -41,7 +43,8 @@ export async function design(host: Host, text: string, place: DocumentPlace): Pr
     if (read.pairing === null) return { result: null, findings: worstFirst(findings) };
     const fit = await fitPair(read.pairing, host.pace);
     const target = toTarget(read.pairing, fit);
-    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings);
+    const inspection = await inspectPair(read.pairing, fit.moments.means, findings, host.pace);
+    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings, inspection);
     return { result, findings: result.findings };
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
@@ -49,7 +52,10 @@ export async function design(host: Host, text: string, place: DocumentPlace): Pr
   }
 }
 
-/** Figures of a solution and its target numbers, as everything that is written needs them. */
+/**
+ * Figures of a solution and its target numbers, as everything that is written needs them.
+ * @param inspection of the pair; null where only the figures are asked for
+ */
 export async function evaluateDesign(
   host: Host,
   pairing: Pairing,
@@ -57,6 +63,7 @@ export async function evaluateDesign(
   fit: Fit,
   target: Target,
   earlier: readonly Finding[],
+  inspection: PairInspection | null,
 ): Promise<DesignResult> {
   const { document, takes, sampleRate } = pairing;
   const { filter } = fit;
@@ -72,6 +79,12 @@ export async function evaluateDesign(
   const trustworthy = document.job !== 'cancel' || heldOut.disturbanceOnly;
   const findings = [
     ...earlier,
+    ...(inspection === null
+      ? []
+      : [
+          ...inspection.findings,
+          ...unprovenGain(filter.coefficients, inspection.excitation, sampleRate, takes[0]),
+        ]),
     ...proofFindings(pairing, fit, heldOut),
     ...residualFindings(confidence.residuals, inputs, document.filter.length),
     ...overflowFindings(target.filter, evaluation.target),
@@ -98,6 +111,7 @@ export async function evaluateDesign(
     conditionNumber: fit.solution.conditionNumber,
     fit: fitted,
     confidence,
+    inspection,
     heldOut: proved
       ? {
           ...evaluation.total,

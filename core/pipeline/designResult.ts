@@ -9,6 +9,7 @@ import type { Interval } from '../pair/intervals';
 import type { Levels } from '../recordings/levels';
 import type { Method } from '../solvers/prepare';
 import type { Confidence } from './confidence';
+import type { PairInspection } from './inspectPair';
 import type { WordStudy } from './studyWords';
 
 export type { BandFigure, Confidence, ErrorFigure, Interval, SpectraFigures, TakeFigure, TestVectors };
@@ -107,6 +108,8 @@ export interface DesignResult {
   confidence: Confidence;
   heldOut: HeldOutFigures | null;
   spectra: SpectraFigures;
+  /** Of the pair; null where it was not asked for. */
+  inspection: PairInspection | null;
   arithmetic: ArithmeticResult;
   /** Null where the taps are free. */
   shape: ShapeResult | null;

@@ -1,9 +1,12 @@
-import { type Finding, finding, worstFirst } from '../findings/finding';
-import { measureLevels } from '../recordings/measureLevels';
+import { blocked, type Finding, finding, Refusal, worstFirst } from '../findings/finding';
+import { measureMoments } from '../pair/moments';
 import { openRecording } from '../recordings/openRecording';
 import { channelLabel } from '../recordings/recording';
+import { surveyRecording } from '../suitability/recording/surveyRecording';
+import { checkPair, checkSilence } from './checkPair';
 import type { RecordingSummary } from './designResult';
 import type { Host } from './host';
+import { inspectPair, type PairInspection } from './inspectPair';
 import { type DocumentPlace, readPairing } from './pairing';
 import { recordingSummaries } from './summaries';
 
@@ -17,8 +20,8 @@ export interface InspectedRecording {
 /** What the inspection of a pairing found. */
 export interface InspectedPairing {
   recordings: RecordingSummary[];
-  /** Names of the takes. */
-  takes: string[];
+  /** Null where a blocker was found. */
+  pair: PairInspection | null;
   findings: Finding[];
 }
 
@@ -36,19 +39,7 @@ export async function inspectRecording(host: Host, path: string, file: string): 
   }
   const { recording, findings } = await openRecording(source, file, host.pace);
   if (recording === null) return { recording: null, findings: worstFirst(findings) };
-  const levels = await measureLevels(recording, host.pace);
-  levels.forEach(({ notFinite }, c) => {
-    if (notFinite === null) return;
-    const { count, first } = notFinite;
-    findings.push(
-      finding(
-        'not-finite',
-        { count, first },
-        { file, channel: channelLabel(recording, c), from: first },
-        'caution',
-      ),
-    );
-  });
+  const survey = await surveyRecording(recording, {}, host.pace);
   return {
     recording: {
       file,
@@ -56,9 +47,9 @@ export async function inspectRecording(host: Host, path: string, file: string): 
       samples: recording.samples,
       sampleRate: recording.sampleRate,
       channels: recording.channels.map((_, c) => channelLabel(recording, c)),
-      levels,
+      levels: survey.levels,
     },
-    findings: worstFirst(findings),
+    findings: worstFirst([...findings, ...survey.findings]),
   };
 }
 
@@ -69,9 +60,18 @@ export async function inspectPairing(
   place: DocumentPlace,
 ): Promise<InspectedPairing> {
   const { pairing, findings } = await readPairing(host, text, place);
-  return {
-    recordings: pairing === null ? [] : recordingSummaries(pairing),
-    takes: pairing === null ? [] : pairing.takes.map((take) => take.name),
-    findings: worstFirst(findings),
-  };
+  if (pairing === null) return { recordings: [], pair: null, findings: worstFirst(findings) };
+  const recordings = recordingSummaries(pairing);
+  try {
+    const { takes, document } = pairing;
+    const blockers = checkPair(pairing);
+    const moments = await measureMoments(takes, document.prepare.removeMean, host.pace);
+    blockers.push(...checkSilence(takes, moments));
+    if (blocked(blockers)) throw new Refusal(blockers);
+    const pair = await inspectPair(pairing, moments.means, findings, host.pace);
+    return { recordings, pair, findings: worstFirst([...findings, ...pair.findings]) };
+  } catch (error) {
+    if (!(error instanceof Refusal)) throw error;
+    return { recordings, pair: null, findings: worstFirst([...findings, ...error.findings]) };
+  }
 }

@@ -1,7 +1,7 @@
 import type { Rounding } from '../document/pairingDocument';
 import { type RoundingCost, roundErrorAware } from '../numbers/errorAwareRounding';
 import { type HeldSum, holdSum } from '../numbers/heldSum';
-import { scaledCoefficients, type Scaling } from '../numbers/scaling';
+import { type Scaling, scaledCoefficients } from '../numbers/scaling';
 import { clamp, powerOfTwo, roundHalfUp, type WordRange, wordRange } from '../numbers/words';
 import { factorCholesky } from '../solvers/cholesky';
 import { unfold } from '../solvers/fold';

@@ -1,14 +1,10 @@
-import { newErrorTally } from '../evaluation/errorTally';
-import type { Filter } from '../evaluation/filter';
-import { filterStretch } from '../evaluation/filterStretch';
-import { errorFigure } from '../evaluation/fitFigure';
 import type { Run } from '../evaluation/measuredRuns';
+import { runsFigure } from '../evaluation/runsFigure';
 import { significant } from '../figures/numbers';
 import { type Finding, finding } from '../findings/finding';
 import { integerFormat, type TargetFilter } from '../numbers/targetFilter';
 import { powerOfTwo } from '../numbers/words';
 import type { Pace } from '../pace';
-import { signalReader } from '../pair/signals';
 import { conditionsOf } from '../solvers/fixedGain';
 import type { ShapeResult } from './designResult';
 import type { Fit } from './fitPair';
@@ -31,7 +27,7 @@ export async function shapeResult(
   if (symmetry === 'none' && fixedGain === null) return null;
   const prices: ShapeResult['prices'] = [];
   for (const { without, filter } of fit.unshaped) {
-    const price = await nmseOver(runs, filter, pace);
+    const price = (await runsFigure(runs, filter, pace)).nmseDb;
     prices.push({ without, nmseDb: price, priceDb: nmseDb - price });
   }
   return { gain: gainResult(fit, target, (fixedGain?.input ?? 1) - 1), prices };
@@ -48,19 +44,6 @@ function gainResult({ gain, free, fold }: Fit, target: TargetFilter, input: numb
     taps: conditionsOf(gain, free[input]),
     target: conditionsOf(gain, written),
   };
-}
-
-async function nmseOver(runs: readonly Run[], filter: Filter, pace: Pace): Promise<number> {
-  const tally = newErrorTally(1, 1);
-  for (const { take, segments } of runs) {
-    const read = signalReader(take, { means: filter.means, delay: filter.delay });
-    for (const stretch of segments) {
-      await filterStretch(read, stretch, filter.coefficients, pace, ({ desired, output }) => {
-        tally.add(desired, output);
-      });
-    }
-  }
-  return errorFigure(tally.samples, tally.errorEnergy, tally.desiredEnergy).nmseDb;
 }
 
 /** Says so where the integers could not have the fixed gain exactly. */

@@ -70,7 +70,8 @@ function newTransform(size: number): Transform {
     forward(re, im) {
       let n = size;
       for (const table of stages) {
-        forwardStage(re, im, n, table);
+        if (n === 4) fours(re, im);
+        else forwardStage(re, im, n, table);
         n /= 4;
       }
       if (n === 2) pairs(re, im);
@@ -156,6 +157,28 @@ function inverseStage(re: Float64Array, im: Float64Array, n: number, table: Floa
       re[p3] = b1Re - oddRe;
       im[p3] = b1Im - oddIm;
     }
+  }
+}
+
+/** The forward stage of 4 points, whose factors are all 1. */
+function fours(re: Float64Array, im: Float64Array): void {
+  for (let p = 0; p < re.length; p += 4) {
+    const sumRe = re[p] + re[p + 2];
+    const sumIm = im[p] + im[p + 2];
+    const oddRe = re[p + 1] + re[p + 3];
+    const oddIm = im[p + 1] + im[p + 3];
+    const gapRe = re[p] - re[p + 2];
+    const gapIm = im[p] - im[p + 2];
+    const sideRe = im[p + 1] - im[p + 3];
+    const sideIm = re[p + 3] - re[p + 1];
+    re[p] = sumRe + oddRe;
+    im[p] = sumIm + oddIm;
+    re[p + 1] = sumRe - oddRe;
+    im[p + 1] = sumIm - oddIm;
+    re[p + 2] = gapRe + sideRe;
+    im[p + 2] = gapIm + sideIm;
+    re[p + 3] = gapRe - sideRe;
+    im[p + 3] = gapIm - sideIm;
   }
 }
 

@@ -1,12 +1,13 @@
 import { type Command, exit, helpText, readArguments, UsageError } from './commandLine';
 import { apply } from './commands/apply';
 import { check } from './commands/check';
+import { choose } from './commands/choose';
 import { design } from './commands/design';
 import { inspect } from './commands/inspect';
 import { pair } from './commands/pair';
 import { newTerminal } from './terminal';
 
-const commands: Command[] = [pair, inspect, design, check, apply];
+const commands: Command[] = [pair, inspect, choose, design, check, apply];
 
 function overview(): string {
   const rows = commands.map(({ name, usage, summary }) => [`  tapwright ${name} ${usage}`, summary]);

@@ -1,11 +1,16 @@
+import { changeInWords } from '../../core/comparison/changeInWords';
+import type { DesignChange } from '../../core/comparison/compareDesigns';
 import { decibels } from '../../core/figures/decibels';
 import { jobWords } from '../../core/figures/jobWords';
 import { counted, grouped, significant } from '../../core/figures/numbers';
 import { visible } from '../../core/figures/visible';
 import type { DesignResult } from '../../core/pipeline/designResult';
 
-/** The result of a design in a few lines for a terminal. */
-export function designSummary(result: DesignResult): string {
+/**
+ * The result of a design in a few lines for a terminal.
+ * @param change against the files that were there; null where there were none or their taps are the same
+ */
+export function designSummary(result: DesignResult, change: DesignChange | null): string {
   const { document, fit, heldOut, arithmetic } = result;
   const { length, delay, regularisation } = document.filter;
   const inputs = result.coefficients.length;
@@ -28,12 +33,22 @@ export function designSummary(result: DesignResult): string {
       rows.push(['', `${visible(take.name)}: ${decibels(take.nmseDb)}${error}`]);
     }
   }
+  if (heldOut !== null && heldOut.outsideBandDb !== null) {
+    rows.push(['', `outside the band: ${decibels(heldOut.outsideBandDb)}`]);
+  }
+  const limit = result.inspection?.attainable.attainableDb ?? null;
+  if (limit !== null)
+    rows.push(['limit', `a reduction of about ${decibels(limit)} for any linear filter, by the coherence`]);
   rows.push(['target', targetLine(result)]);
   if (arithmetic.accumulatorOverflows + arithmetic.outputOverflows > 0) {
     rows.push([
       '',
       `overflows: accumulator ${grouped(arithmetic.accumulatorOverflows)}, output ${grouped(arithmetic.outputOverflows)}`,
     ]);
+  }
+  if (change !== null) {
+    const [taps, effect] = changeInWords(change);
+    rows.push(['change', taps], ['', effect]);
   }
   const title = `${visible(document.title)} (${jobWords[document.job]}, ${result.documentFile})`;
   return [title, ...rows.map(([name, text]) => `  ${name.padEnd(9)} ${text}`)].join('\n');

@@ -25,7 +25,7 @@ const taps = (name: string) =>
 describe.each(documents)('%s', (document, name) => {
   it('designs with the held-out NMSE that its scenario allows', () => {
     const { status, out, err } = tapwright(bench, 'design', document, '--json');
-    expect(err).toBe('');
+    expect(err.replace(/^.*\[spectral-null\]\n/m, '')).toBe('');
     expect(status).toBe(0);
     const result = JSON.parse(out);
     // Known from how the recordings were made.
@@ -33,7 +33,9 @@ describe.each(documents)('%s', (document, name) => {
     expect(Math.abs(result.heldOut.nmseDb - idealNmseDb)).toBeLessThan(0.3);
     expect(result.arithmetic.quantisationLossDb).toBeLessThanOrEqual(0.1);
     expect(result.arithmetic.overflows).toBe(0);
-    expect(result.findings).toEqual([]);
+    // The tubing's path falls by some 40 dB towards half the sample rate; nothing else is wrong with the bench.
+    const expected = name === 'tubing' ? ['spectral-null'] : [];
+    expect(result.findings.map(({ code }: { code: string }) => code)).toEqual(expected);
     const { taps: version, generated, files, self, ...figures } = taps(name);
     expect(version).toBe(1);
     const { written, ...printed } = result;

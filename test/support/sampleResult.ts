@@ -7,6 +7,7 @@ import type {
   Word,
 } from '../../core/document/pairingDocument';
 import { type Finding, finding } from '../../core/findings/finding';
+import type { Confidence } from '../../core/pipeline/confidence';
 import type { DesignResult, HeldOutFigures, SpectraFigures } from '../../core/pipeline/designResult';
 import { exactFilter } from './exactFilter';
 import { seededUniform } from './random';
@@ -113,6 +114,7 @@ export function sampleResult(options: SampleOptions = {}): DesignResult {
     method: 'cholesky',
     conditionNumber: 1043.7,
     fit: { samples: 79937, mse: 0.0123456789, nmseDb: -31.204 },
+    confidence: confidence(coefficients, options),
     heldOut: heldOut(options),
     spectra: spectra(),
     arithmetic: {
@@ -135,10 +137,48 @@ export function sampleResult(options: SampleOptions = {}): DesignResult {
       outputOverflows: 0,
       samples: { none: 79937, all: 40000, 'disturbance only': 20000 }[options.heldOut ?? 'disturbance only'],
     },
+    inspection: null,
     shape: null,
     words: integers ? sampleStudy() : null,
     vectors: { input, expected: run.output, parts },
     findings: findings(document, options.heldOut ?? 'disturbance only'),
+  };
+}
+
+/** Errors of a thousandth of a tap's size, and a residual in which nothing is left. */
+function confidence(coefficients: readonly Float64Array[], { job }: SampleOptions): Confidence {
+  const points = 129;
+  const row = (value: number) => new Float64Array(points).fill(value);
+  const sides = job === 'predict' ? (['after'] as const) : (['before', 'after'] as const);
+  return {
+    window: 1024,
+    errors: {
+      standardErrors: coefficients.map((taps, r) => taps.map(() => 0.003 * (r + 1))),
+      response: {
+        points,
+        inputs: coefficients.map((_, r) => ({
+          real: row(4e-4 * (r + 1)),
+          imaginary: row(3e-4 * (r + 1)),
+          both: row(1e-5),
+        })),
+      },
+    },
+    residuals: {
+      samples: 79937,
+      autocorrelation: Float64Array.from({ length: 201 }, (_, k) => 0.4 ** k),
+      bound: 0.00693,
+      whiteness: { lags: 20, statistic: 15600.25, degreesOfFreedom: 20, probability: 0 },
+      inputs: coefficients.map((taps) => ({
+        from: -32,
+        values: new Float64Array(taps.length + 64).fill(1e-3),
+        bound: 0.0081,
+        inside: 2.5e-6,
+        fromRegularisation: 2.5e-6,
+      })),
+      extra: sides.flatMap((side) =>
+        coefficients.map((_, input) => ({ input, side, lags: 32, probability: 0.42, share: 1e-5 })),
+      ),
+    },
   };
 }
 
@@ -270,6 +310,7 @@ function heldOut({ heldOut: which, take }: SampleOptions): HeldOutFigures | null
   const figure = { samples, mse: 0.0131234, nmseDb: -30.83 };
   return {
     ...figure,
+    outsideBandDb: null,
     disturbanceOnly: which !== 'all',
     bands: [12.1, 25.31, 33.02, -0.42].map((reductionDb, b) => ({
       from: 250 * b,

@@ -17,6 +17,11 @@ export function strokeOf(index: number): string {
   return `stroke="${colours[index % colours.length]}"${dash === '' ? '' : ` stroke-dasharray="${dash}"`}`;
 }
 
+/** The colour of the stroke of that index. */
+export function fillOf(index: number): string {
+  return colours[index % colours.length];
+}
+
 /** The curve as a path; long ones are reduced to the lowest and the highest value of each column. */
 export function curvePath(plot: Plot, curve: Curve, index: number): string {
   const path = line<number>()

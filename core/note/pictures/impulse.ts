@@ -1,8 +1,9 @@
+import { normal95 } from '../../confidence/tapErrors';
 import { duration } from '../../figures/units';
 import type { DesignResult } from '../../pipeline/designResult';
 import { curvePath, strokeOf } from './curves';
 import { axes, newPlot, type Plot } from './plot';
-import { coordinate, ink, shortened, svgFile, xmlText } from './svg';
+import { coordinate, faintInk, ink, shortened, svgFile, xmlText } from './svg';
 
 const top = 40;
 /** Heading, plot and axis of one input. */
@@ -20,13 +21,14 @@ export function impulsePicture(result: DesignResult, mark: string): string {
   return svgFile({
     mark,
     title: 'Impulse response',
-    description: `Coefficients over their delay k, 0 to ${coefficients[0].length - 1} samples of ${duration(1 / sampleRate)}, one plot for each input: ${inputs.join(', ')}.`,
+    description: `Coefficients over their delay k, 0 to ${coefficients[0].length - 1} samples of ${duration(1 / sampleRate)}, one plot for each input: ${inputs.join(', ')}${'withheld' in result.confidence.errors || coefficients[0].length > stemsUpTo ? '' : '; grey bars reach over 95 % of their errors'}.`,
     height: top + coefficients.length * panelHeight,
     body: coefficients.flatMap((row, r) => panel(result, row, r)),
   });
 }
 
-function panel({ inputs, sampleRate }: DesignResult, row: Float64Array, r: number): string[] {
+function panel(result: DesignResult, row: Float64Array, r: number): string[] {
+  const { inputs, sampleRate } = result;
   const start = top + r * panelHeight;
   const low = row.reduce((m, v) => Math.min(m, v), 0);
   const high = row.reduce((m, v) => Math.max(m, v), 0);
@@ -40,7 +42,28 @@ function panel({ inputs, sampleRate }: DesignResult, row: Float64Array, r: numbe
       Math.min(8, row.length),
     ),
     `<path d="M${plot.left},${coordinate(plot.y(0))}H${plot.right}" stroke="${ink}"/>`,
+    ...errorBars(result, plot, row, r),
     row.length <= stemsUpTo ? stems(plot, row) : curvePath(plot, { x: row.map((_, k) => k), y: row }, 0),
+  ];
+}
+
+/** A bar of 95 % around each tap, where errors are known and the taps are drawn one by one. */
+function errorBars(
+  { confidence: { errors } }: DesignResult,
+  plot: Plot,
+  row: Float64Array,
+  r: number,
+): string[] {
+  const own = 'withheld' in errors ? undefined : errors.standardErrors[r];
+  if (own === undefined || row.length > stemsUpTo) return [];
+  const [low, high] = plot.y.domain();
+  const at = (value: number) => coordinate(plot.y(Math.min(high, Math.max(low, value))));
+  const bars = Array.from(row, (w, k) => {
+    const reach = normal95 * (own[k] ?? 0);
+    return `M${coordinate(plot.x(k))},${at(w - reach)}V${at(w + reach)}`;
+  });
+  return [
+    `<path d="${bars.join('')}" fill="none" stroke="${faintInk}" stroke-opacity="0.5" stroke-width="4"/>`,
   ];
 }
 

@@ -1,19 +1,33 @@
+import { errorShares } from '../../evaluation/errorShares';
 import { decibels } from '../../figures/decibels';
 import { counted, grouped, noFigure, significant } from '../../figures/numbers';
 import { frequency } from '../../figures/units';
 import type { DesignResult, ErrorFigure } from '../../pipeline/designResult';
 import { name, section, table } from '../markdown';
+import { residualTests } from '../residualTests';
 import { wantedSignalHides, wantedSignalInFit, wantedSignalReminder } from '../wantedSignal';
 
 /** Fit and held-out figures, for each take and by band. */
 export function outcome(result: DesignResult): string {
-  return section('Result', where(result), figures(result), wantedSignalReminder(result), ...bands(result));
+  return section(
+    'Result',
+    where(result),
+    figures(result),
+    wantedSignalReminder(result),
+    limit(result),
+    ...bands(result),
+    ...residualTests(result),
+  );
 }
 
 function where(result: DesignResult): string {
-  const { heldOut, takes } = result;
-  const definition =
-    'NMSE is the power of the error relative to that of the desired signal over the same samples, means removed as in the fit; its negative is the reduction.';
+  const { heldOut, takes, document } = result;
+  const { band } = document.prepare;
+  const weighted =
+    band === null
+      ? ''
+      : ` Both are passed through the band ${frequency(band.from)} to ${frequency(band.to)} first; what that takes off is compared in a row of its own.`;
+  const definition = `NMSE is the power of the error relative to that of the desired signal over the same samples, means removed as in the fit; its negative is the reduction.${weighted}`;
   if (heldOut === null) return `${definition} No interval is held out.`;
   const which = heldOut.disturbanceOnly
     ? `The held-out figures are over the disturbance-only part of the held-out intervals, where the wanted signal is absent.${leftOut(takes, heldOut.takes)}`
@@ -47,6 +61,15 @@ function figures({ fit, heldOut, takes }: DesignResult): string {
       for (const take of heldOut.takes)
         rows.push(row(`held out, take ${name(take.name)}`, take, take.standardErrorDb));
     }
+    const outside = heldOut.outsideBandDb;
+    if (outside !== null)
+      rows.push([
+        'held out, outside the band',
+        grouped(heldOut.samples),
+        noFigure,
+        decibels(outside),
+        noFigure,
+      ]);
   }
   return table(['data', 'samples', 'mean squared error', 'NMSE', 'standard error'], rows, [
     'samples',
@@ -56,19 +79,35 @@ function figures({ fit, heldOut, takes }: DesignResult): string {
   ]);
 }
 
+/** What no filter could exceed, beside what this one reaches. */
+function limit({ inspection }: DesignResult): string {
+  if (inspection === null) return '';
+  const { attainableDb, atLeastDb, attainableReason } = inspection.attainable;
+  if (attainableDb !== null) {
+    return `**Attainable:** the coherence of the fit data allows a reduction of about ${decibels(attainableDb)} by a linear filter of any length. Where the filter comes near it, more taps cannot help.`;
+  }
+  const least = atLeastDb === null ? '' : ` It is no less than ${decibels(atLeastDb)}.`;
+  return `**Attainable:** not shown, since ${attainableReason ?? 'it cannot be told from these recordings'}.${least}`;
+}
+
 function bands(result: DesignResult): string[] {
-  const { heldOut, spectra } = result;
+  const { heldOut, spectra, inspection } = result;
   if (heldOut === null || heldOut.bands.length === 0) return [];
+  const shares = errorShares(spectra);
+  const unknown = (from: number, to: number) =>
+    inspection?.unknownBands.some((band) => band.from < to && band.to > from) ? ' (in part unknown)' : '';
   const caution = wantedSignalHides(result) ? ' The caution above holds for every row.' : '';
   return [
     `Held-out reduction by band, from ${counted(spectra.averages, 'averaged segment')} of ${counted(spectra.segment, 'sample')} (Hann window, half overlap); negative where the filter adds to the error.${caution}`,
     table(
-      ['band', 'reduction'],
-      heldOut.bands.map(({ from, to, reductionDb }) => [
-        `${frequency(from)} to ${frequency(to)}`,
+      ['band', 'reduction', 'attainable', 'share of the error'],
+      heldOut.bands.map(({ from, to, reductionDb }, b) => [
+        `${frequency(from)} to ${frequency(to)}${unknown(from, to)}`,
         decibels(reductionDb),
+        decibels(inspection?.attainable.bandsDb[b] ?? null),
+        decibels(shares[b]?.shareDb ?? null),
       ]),
-      ['band', 'reduction'],
+      ['reduction', 'attainable', 'share of the error'],
     ),
   ];
 }

@@ -19,6 +19,9 @@ export function pictures(result: DesignResult, folder: string): string {
     link('Impulse response: the coefficients over their delay', 'impulse.svg'),
     link('Magnitude response in dB over frequency', 'magnitude.svg'),
     link(`Spectra of the ${data} data: ${curves}`, 'spectra.svg'),
+    result.inspection?.coherence
+      ? link('Coherence of the desired signal with the inputs', 'coherence.svg')
+      : '',
     wantedSignalReminder(result),
   );
 }

@@ -3,6 +3,7 @@ import { duration } from '../../figures/units';
 import { powerOfTwo } from '../../numbers/words';
 import type { DesignResult } from '../../pipeline/designResult';
 import { code, name, section, table } from '../markdown';
+import { errorsInWords, tapWithError } from '../tapErrors';
 
 const shown = 8;
 
@@ -17,13 +18,15 @@ export function taps(result: DesignResult, tapsFile: string): string {
     result.arithmetic.fractionBits === null
       ? ''
       : `w[k] multiplies x[n-k], in the unit of d for the unit of x; c[k] is the same in output counts for an input count; the integer v[k] is what is written and stands for v[k] / 2^${result.arithmetic.fractionBits}; the last column is v[k] less what it stands for, in steps of one.`,
+    errorsInWords(result),
     ...coefficients.map(
       (row, r) => `${inputs.length === 1 ? '' : `Input ${name(inputs[r])}:\n\n`}${largest(result, row, r)}`,
     ),
   );
 }
 
-function largest({ arithmetic, sampleRate }: DesignResult, row: Float64Array, r: number): string {
+function largest(result: DesignResult, row: Float64Array, r: number): string {
+  const { arithmetic, sampleRate } = result;
   const integers = arithmetic.fractionBits !== null;
   const scale = arithmetic.inputCount[r] / arithmetic.outputCount;
   const unit = powerOfTwo(-(arithmetic.fractionBits ?? 0));
@@ -31,12 +34,14 @@ function largest({ arithmetic, sampleRate }: DesignResult, row: Float64Array, r:
     .sort((a, b) => Math.abs(row[b]) - Math.abs(row[a]) || a - b)
     .slice(0, shown)
     .sort((a, b) => a - b);
+  const errors = 'withheld' in result.confidence.errors ? [] : ['standard error'];
   const head = integers
-    ? ['k', 'time', 'w[k]', 'c[k]', 'v[k]', 'rounding, steps']
-    : ['k', 'time', 'w[k]', 'written'];
+    ? ['k', 'time', 'w[k]', ...errors, 'c[k]', 'v[k]', 'rounding, steps']
+    : ['k', 'time', 'w[k]', ...errors, 'written'];
   const rows = order.map((k) => {
     const written = arithmetic.values[r][k];
-    const start = [String(k), duration(k / sampleRate), significant(row[k], 6)];
+    const { tap, error } = tapWithError(result, r, k);
+    const start = [String(k), duration(k / sampleRate), tap, ...(error === null ? [] : [error])];
     if (!integers) return [...start, significant(written, 9)];
     const counts = row[k] * scale;
     return [

@@ -1,6 +1,6 @@
 import { decibels } from '../../figures/decibels';
 import { counted, noFigure } from '../../figures/numbers';
-import { duration } from '../../figures/units';
+import { duration, frequency } from '../../figures/units';
 import { wordInWords } from '../../files/numberTypes';
 import type { Finding } from '../../findings/finding';
 import { sayWithPlace } from '../../findings/say';
@@ -44,11 +44,13 @@ function shown({ heldOut, fit, arithmetic, desired, document, sampleRate }: Desi
   const figure = heldOut ?? fit;
   const data = heldOut === null ? 'fit' : heldOut.disturbanceOnly ? 'held-out, disturbance-only' : 'held-out';
   const time = duration(figure.samples / sampleRate);
+  const asked = document.prepare.band;
+  const band = asked === null ? '' : ` in the band ${frequency(asked.from)} to ${frequency(asked.to)}`;
   const target =
     document.arithmetic.word === 'float64'
       ? ''
       : `; in the arithmetic of the target, with ${wordInWords(document.arithmetic.word)} taps, ${decibels(arithmetic.heldOutNmseDb)}`;
-  return `On ${counted(figure.samples, `${data} sample`)} (${time}) the power of the error is ${decibels(figure.nmseDb)} relative to that of the desired signal ${name(desired)}${target}.`;
+  return `On ${counted(figure.samples, `${data} sample`)} (${time}) the power of the error${band} is ${decibels(figure.nmseDb)} relative to that of the desired signal ${name(desired)}${target}.`;
 }
 
 function limitRow(result: DesignResult, check: LimitCheck): string[] {

@@ -1,7 +1,9 @@
+import { changeJson } from '../../../core/files/changeJson';
 import { designFiles } from '../../../core/files/designFiles';
 import { findingJson, resultJson } from '../../../core/files/tapsJson';
 import { blocked, type Finding } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
+import { changeAgainst } from '../../../core/pipeline/changeAgainst';
 import { design as runDesign } from '../../../core/pipeline/design';
 import { type Arguments, type Command, exit } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
@@ -45,14 +47,18 @@ async function designOne(document: string, given: Arguments, terminal: Terminal)
   try {
     const { result, findings } = await runDesign(host, text, place);
     if (result === null) return report(terminal, given, document, text, findings);
-    const written = await writeFiles(root, folder, designFiles(result, host.newSha256));
+    const files = designFiles(result, host.newSha256);
+    // The taps file comes last; it is compared before it is overwritten.
+    const change = await changeAgainst(host, place.folder, files[files.length - 1].path, result);
+    const written = await writeFiles(root, folder, files);
     if (blocked(written.findings)) return report(terminal, given, document, text, written.findings);
     for (const found of findings) terminal.complain(problemLine(found, document, text));
     if (given.flag('json')) {
-      terminal.print(JSON.stringify({ ...resultJson(result), written: written.files }, null, 2));
+      const changed = change === null ? {} : { change: changeJson(change) };
+      terminal.print(JSON.stringify({ ...resultJson(result), ...changed, written: written.files }, null, 2));
     } else {
-      const files = written.files.map(({ path, change }) => `  ${change.padEnd(9)} ${path}`);
-      terminal.print([designSummary(result), ...files].join('\n'));
+      const lines = written.files.map((file) => `  ${file.change.padEnd(9)} ${file.path}`);
+      terminal.print([designSummary(result, change), ...lines].join('\n'));
     }
     return findings.some((found) => found.code === 'over-limit') ? exit.failed : exit.ok;
   } finally {

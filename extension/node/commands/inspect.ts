@@ -1,6 +1,7 @@
 import { basename, dirname, resolve } from 'node:path';
 import { grouped, significant } from '../../../core/figures/numbers';
 import { visible } from '../../../core/figures/visible';
+import { inspectedTakeJson } from '../../../core/files/inspectionJson';
 import { findingJson } from '../../../core/files/tapsJson';
 import { blocked } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
@@ -8,6 +9,7 @@ import type { RecordingSummary } from '../../../core/pipeline/designResult';
 import { inspectPairing, inspectRecording } from '../../../core/pipeline/inspect';
 import { type Arguments, type Command, exit } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
+import { pairText } from '../pairText';
 import { newTerminal, type Terminal } from '../terminal';
 import { openWorkplace } from '../workplace';
 
@@ -15,7 +17,10 @@ export const inspect: Command = {
   name: 'inspect',
   usage: 'FILE|DOC',
   summary: 'shows format, levels and findings',
-  help: 'Opens a recording, or all recordings that a pairing document names, and shows format, levels and findings.',
+  help: [
+    'Opens a recording, or all recordings that a pairing document names, and shows format, levels and findings; of a',
+    'document also whether the signals belong together: lag, clock difference, coherence and what it allows.',
+  ].join('\n'),
   positionals: [1, 1],
   options: {
     root: {
@@ -57,16 +62,17 @@ async function inspectDocument(file: string, given: Arguments, terminal: Termina
   }
   const host = newNodeHost(workplace.root, terminal.pace());
   try {
-    const { recordings, takes, findings } = await inspectPairing(host, workplace.text, workplace.place);
+    const { recordings, pair, findings } = await inspectPairing(host, workplace.text, workplace.place);
     for (const found of findings) terminal.complain(problemLine(found, file, workplace.text));
     if (given.flag('json')) {
       const json = {
         recordings: recordings.map(recordingJson),
-        takes: takes.map((name) => ({ name })),
+        takes: pair?.takes.map(inspectedTakeJson) ?? [],
         findings: findings.map(findingJson),
       };
       terminal.print(JSON.stringify(json, null, 2));
-    } else terminal.print(recordings.map(recordingText).join('\n'));
+    } else
+      terminal.print([...recordings.map(recordingText), ...(pair === null ? [] : pairText(pair))].join('\n'));
     return blocked(findings) ? exit.badInput : exit.ok;
   } finally {
     await host.close();

@@ -1,6 +1,7 @@
 import { execFileSync } from 'node:child_process';
 import { describe, expect, it } from 'vitest';
-import { hann, newWelch } from '../../../core/spectra/welch';
+import { hann } from '../../../core/spectra/hann';
+import { newWelch } from '../../../core/spectra/welch';
 import { needs, python } from '../../support/programs';
 import { normals } from '../../support/random';
 

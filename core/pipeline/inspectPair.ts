@@ -1,0 +1,71 @@
+import type { Finding } from '../findings/finding';
+import type { Pace } from '../pace';
+import type { Means } from '../pair/signals';
+import { inspectChange } from '../suitability/change/inspectChange';
+import type { Band } from '../suitability/pair/bands';
+import type { CoherenceCurve } from '../suitability/pair/coherenceCurve';
+import type { Excitation } from '../suitability/pair/excitation';
+import { type AttainableFigure, inspectSpectra } from '../suitability/pair/inspectSpectra';
+import { inspectTiming, type TakeTiming } from '../suitability/timing/inspectTiming';
+import type { Pairing } from './pairing';
+
+/** What one take tells about the pair; spectral figures are null where the take has no part to take them from. */
+export interface TakeInspection extends TakeTiming {
+  attainableDb: number | null;
+  attainableReason: string | null;
+  coherence: CoherenceCurve | null;
+}
+
+/** Whether the recordings of a pair belong together and what they can give at best. */
+export interface PairInspection {
+  takes: TakeInspection[];
+  /** Of all takes as one: what an unconstrained linear filter could reach. */
+  attainable: Omit<AttainableFigure, 'coherence' | 'spectra'>;
+  coherence: CoherenceCurve | null;
+  excitation: Excitation;
+  /** For `identify`: bands in which the model says nothing. */
+  unknownBands: Band[];
+  findings: Finding[];
+}
+
+/**
+ * Inspects the fit intervals of every take: timing first, so that the spectra are laid over each other, then what changes
+ * along the recordings.
+ * @param means as the fit takes them off
+ * @param earlier findings that are there already, so that nothing is said twice
+ * @throws Refusal `not-finite-used` where a sample is NaN or infinite
+ */
+export async function inspectPair(
+  { document, takes, sampleRate }: Pairing,
+  means: Means,
+  earlier: readonly Finding[],
+  pace: Pace,
+): Promise<PairInspection> {
+  const { job, filter } = document;
+  const timing = await inspectTiming(takes, document, means, pace);
+  const lags = timing.takes.map(({ lagSamples }) => lagSamples ?? 0);
+  const spectra = await inspectSpectra({ takes, job, filter, sampleRate, means, lags }, pace);
+  const change = await inspectChange(takes, document, means, pace, [...earlier, ...timing.findings]);
+  const { together } = spectra;
+  return {
+    takes: timing.takes.map((take) => {
+      const own = spectra.takes.find(({ name }) => name === take.name);
+      return {
+        ...take,
+        attainableDb: own?.attainableDb ?? null,
+        attainableReason: own?.attainableReason ?? null,
+        coherence: own?.coherence ?? null,
+      };
+    }),
+    attainable: {
+      attainableDb: together.attainableDb,
+      attainableReason: together.attainableReason,
+      atLeastDb: together.atLeastDb,
+      bandsDb: together.bandsDb,
+    },
+    coherence: together.coherence,
+    excitation: spectra.excitation,
+    unknownBands: spectra.unknownBands,
+    findings: [...timing.findings, ...spectra.findings, ...change.findings],
+  };
+}
