@@ -6,6 +6,7 @@ import type { Row } from './row';
 import { fileRows } from './rows/files';
 import { forgetSignals, signalRows } from './rows/signals';
 import { solverRows } from './rows/solvers';
+import { stageRows } from './rows/stages';
 
 // Prints a Markdown table of our time over the reference's, medians of alternating runs in one go.
 // Words on the command line choose the rows whose names hold them.
@@ -47,7 +48,7 @@ async function main(): Promise<void> {
   console.log('| work; reference | ours, ms | reference, ms | ratio | goal | reached |');
   console.log('| --- | --: | --: | --: | --: | --- |');
   try {
-    for (const rows of [signalRows, solverRows, fileRows]) {
+    for (const rows of [signalRows, solverRows, fileRows, stageRows]) {
       for (const row of rows) {
         if (wanted.length > 0 && !wanted.some((word) => row.name.includes(word))) continue;
         await row.prepare(folder);

@@ -28,11 +28,16 @@ export async function runReference(name: string, folder: string): Promise<number
     if (child.stdout === null) throw new Error('no output of the reference');
     lines = createInterface({ input: child.stdout });
   }
+  const own = child;
   const answer = new Promise<string>((resolve, reject) => {
-    lines?.once('line', resolve);
-    child?.once('exit', () => reject(new Error(`the reference ended during ${name}`)));
+    const ended = () => reject(new Error(`the reference ended during ${name}`));
+    own.once('exit', ended);
+    lines?.once('line', (line) => {
+      own.off('exit', ended);
+      resolve(line);
+    });
   });
-  child.stdin?.write(`${name}\n`);
+  own.stdin?.write(`${name}\n`);
   return Number(await answer);
 }
 

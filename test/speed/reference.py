@@ -107,6 +107,30 @@ def inspection():
     return work
 
 
+def search():
+    x, d, length = load("search_x.f64"), load("search_d.f64"), 1024
+    x, d = x - x.mean(), d - d.mean()
+    matrix = np.zeros((length, length))
+    right = np.zeros((length, 33))
+    n = np.arange(1040, 45000)
+    for part in np.array_split(n, 16):
+        rows_of = x[part[:, None] - np.arange(length)]
+        matrix += rows_of.T @ rows_of
+        right += rows_of.T @ np.stack([d[part - delay] for delay in range(-16, 17)], axis=1)
+    matrix /= len(n)
+    right /= len(n)
+    lengths = [int(round(8 * 128 ** (i / 23))) for i in range(24)]
+    power = matrix[0, 0]
+
+    def work():
+        for k in range(9):
+            for m in lengths:
+                regular = matrix[:m, :m] + 10.0 ** (k - 8) * power * np.eye(m)
+                cho_solve(cho_factor(regular, lower=True, overwrite_a=True), right[:m])
+
+    return work
+
+
 rows = {
     "correlations_chunked": correlations_chunked,
     "correlations_batched": correlations_batched,
@@ -119,6 +143,7 @@ rows = {
     "covariance3x1024": lambda: covariance("covariance3x1024"),
     "csv": csv,
     "inspection": inspection,
+    "search": search,
 }
 
 ready = {}

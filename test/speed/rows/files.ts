@@ -1,4 +1,3 @@
-import { spawnSync } from 'node:child_process';
 import { closeSync, openSync, rmSync, writeFileSync, writeSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { newPace } from '../../../core/pace';
@@ -6,8 +5,9 @@ import { openText } from '../../../core/recordings/text/openText';
 import { openFile } from '../../../extension/node/fileSource';
 import { python } from '../../support/programs';
 import { longPair, longSamples, writeWav16 } from '../data';
-import { fastEnvironment, runReference, scripts } from '../python';
+import { runReference, scripts } from '../python';
 import { type Row, timed } from '../row';
+import { peakOf, runTimed } from './programs';
 
 const csvBytes = 200e6;
 const fitSeconds = 400;
@@ -24,19 +24,6 @@ function writeCsv(path: string): void {
 }
 
 let peak = 0;
-
-/** Runs a program to its end; remembers its peak memory in MiB, as GNU time tells it. */
-function runTimed(command: string, args: string[], folder: string): Promise<number> {
-  return timed(() => {
-    const { status, stderr } = spawnSync('/usr/bin/time', ['-f', '%M', command, ...args], {
-      cwd: folder,
-      encoding: 'utf8',
-      env: fastEnvironment(),
-    });
-    if (status !== 0) throw new Error(stderr);
-    peak = Number(stderr.trim().split('\n').at(-1)) / 1024;
-  });
-}
 
 export const fileRows: Row[] = [
   {
@@ -77,21 +64,15 @@ export const fileRows: Row[] = [
       };
       writeFileSync(join(folder, 'long.pairing.json'), JSON.stringify(document));
     },
-    ours: (folder) => {
+    ours: async (folder) => {
       rmSync(join(folder, 'generated'), { recursive: true, force: true });
       const cli = resolve('dist', 'cli.js');
-      return runTimed(process.execPath, [cli, 'design', 'long.pairing.json'], folder);
-    },
-    reference: async (folder) => {
-      const own = peak;
-      const seconds = await runTimed(
-        python,
-        [resolve(scripts, 'wholeJob.py'), 'long.wav', String(fitSeconds)],
-        folder,
-      );
-      peak = own;
+      const seconds = await runTimed(process.execPath, [cli, 'design', 'long.pairing.json'], folder);
+      peak = peakOf();
       return seconds;
     },
+    reference: (folder) =>
+      runTimed(python, [resolve(scripts, 'wholeJob.py'), 'long.wav', String(fitSeconds)], folder),
     remark: () => `peak ${Math.round(peak)} MiB`,
   },
 ];

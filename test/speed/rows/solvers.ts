@@ -1,6 +1,7 @@
 import { newPace } from '../../../core/pace';
-import { normalSystem } from '../../../core/solvers/normalSystem';
-import { solve } from '../../../core/solvers/solve';
+import { type NormalSystem, normalSystem } from '../../../core/solvers/normalSystem';
+import { methodFor, prepare } from '../../../core/solvers/prepare';
+import { refine } from '../../../core/solvers/refine';
 import { emptySums, type NormalSums } from '../../../core/statistics/normalSums';
 import { sumStretch } from '../../../core/statistics/sumStretch';
 import { normals } from '../../support/random';
@@ -61,7 +62,7 @@ function covarianceRow(inputs: number, length: number, goal: number): Row {
         const sums = stored.get(name);
         if (sums === undefined) throw new Error('not prepared');
         const powers = sums.correlations.map((row, r) => row[r][0] / sums.count);
-        solved(solve(normalSystem(sums, powers), inputs, 0));
+        solveOnce(normalSystem(sums, powers));
       }),
     reference: (folder) => runReference(name, folder),
   };
@@ -88,14 +89,18 @@ function toeplitzRow(length: number, goal: number): Row {
     ours: () =>
       timed(() => {
         const scale = new Float64Array(length).fill(1);
-        solved(solve({ size: length, right, scale, matrix: { toeplitz: column } }, 1, 0));
+        solveOnce({ size: length, right, scale, matrix: { toeplitz: column } });
       }),
     reference: (folder) => runReference(`toeplitz${length}`, folder),
   };
 }
 
-function solved(solution: object): void {
-  if ('smallestRegularisation' in solution) throw new Error('not solved');
+/** As the reference does it: the solution, refined, and no condition number. */
+function solveOnce(system: NormalSystem): void {
+  const prepared = prepare(methodFor(system), system, 0);
+  if ('order' in prepared) throw new Error('not solved');
+  const { multiply, inverse, refinements } = prepared;
+  refine(multiply, inverse, system.right, refinements);
 }
 
 export const solverRows: Row[] = [
