@@ -13,6 +13,13 @@ export interface Option {
   says: string;
 }
 
+/** The folder that a document's paths stay in. */
+export const rootOption: Option = {
+  type: 'string',
+  value: 'FOLDER',
+  says: "folder that no path may leave (default: the current one, or the document's)",
+};
+
 export type Options = Readonly<Record<string, Option>>;
 
 /** What was given on the command line. */

@@ -10,17 +10,21 @@ export function splitCells(line: string, separator: Separator): string[] {
   const cells: string[] = [];
   let cell = '';
   let quoted = false;
+  // Whether the cell holds nothing but blanks so far.
+  let bare = true;
   let i = 0;
   const end = () => {
     cells.push(quoted ? cell : cell.trim());
     cell = '';
     quoted = false;
+    bare = true;
   };
   while (i < text.length) {
     const character = text[i];
-    if (character === '"' && cell.trim() === '' && !quoted) {
+    if (character === '"' && bare && !quoted) {
       cell = '';
       quoted = true;
+      bare = false;
       for (i++; i < text.length; i++) {
         if (text[i] !== '"') cell += text[i];
         else if (text[i + 1] === '"') cell += text[i++];
@@ -35,7 +39,10 @@ export function splitCells(line: string, separator: Separator): string[] {
     } else if (character === separator || (separator === ' ' && character === '\t')) {
       end();
       if (separator === ' ') while (text[i + 1] === ' ' || text[i + 1] === '\t') i++;
-    } else if (!quoted) cell += character;
+    } else if (!quoted) {
+      cell += character;
+      bare &&= character === ' ' || character === '\t';
+    }
     i++;
   }
   end();

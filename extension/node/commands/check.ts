@@ -1,7 +1,7 @@
 import { findingJson, resultJson } from '../../../core/files/tapsJson';
 import { problemLine } from '../../../core/findings/problemLine';
 import { check as runCheck } from '../../../core/pipeline/check';
-import { type Arguments, type Command, exit } from '../commandLine';
+import { type Arguments, type Command, exit, rootOption } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
 import { newTerminal, type Terminal } from '../terminal';
 import { openWorkplace } from '../workplace';
@@ -20,11 +20,7 @@ export const check: Command = {
   ].join('\n'),
   positionals: [1, 1000],
   options: {
-    root: {
-      type: 'string',
-      value: 'FOLDER',
-      says: "folder that no path may leave (default: the current one, or the document's)",
-    },
+    root: rootOption,
   },
   async run(given) {
     const terminal = newTerminal();

@@ -4,7 +4,7 @@ import { findingJson } from '../../../core/files/tapsJson';
 import { problemLine } from '../../../core/findings/problemLine';
 import { choose as runChoose } from '../../../core/pipeline/choose';
 import { choiceText } from '../choiceText';
-import { type Command, exit } from '../commandLine';
+import { type Command, exit, rootOption } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
 import { newTerminal } from '../terminal';
 import { openWorkplace } from '../workplace';
@@ -20,11 +20,7 @@ export const choose: Command = {
   ].join('\n'),
   positionals: [1, 1],
   options: {
-    root: {
-      type: 'string',
-      value: 'FOLDER',
-      says: "folder that no path may leave (default: the current one, or the document's)",
-    },
+    root: rootOption,
   },
   async run(given) {
     const terminal = newTerminal();

@@ -5,7 +5,7 @@ import { blocked, type Finding } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
 import { changeAgainst } from '../../../core/pipeline/changeAgainst';
 import { design as runDesign } from '../../../core/pipeline/design';
-import { type Arguments, type Command, exit } from '../commandLine';
+import { type Arguments, type Command, exit, rootOption } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
 import { designSummary } from '../summary';
 import { newTerminal, type Terminal } from '../terminal';
@@ -23,11 +23,7 @@ export const design: Command = {
   ].join('\n'),
   positionals: [1, 1000],
   options: {
-    root: {
-      type: 'string',
-      value: 'FOLDER',
-      says: "folder that no path may leave (default: the current one, or the document's)",
-    },
+    root: rootOption,
   },
   async run(given) {
     const terminal = newTerminal();

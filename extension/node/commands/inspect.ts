@@ -7,7 +7,7 @@ import { blocked } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
 import type { RecordingSummary } from '../../../core/pipeline/designResult';
 import { inspectPairing, inspectRecording } from '../../../core/pipeline/inspect';
-import { type Arguments, type Command, exit } from '../commandLine';
+import { type Arguments, type Command, exit, rootOption } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
 import { pairText } from '../pairText';
 import { newTerminal, type Terminal } from '../terminal';
@@ -23,11 +23,7 @@ export const inspect: Command = {
   ].join('\n'),
   positionals: [1, 1],
   options: {
-    root: {
-      type: 'string',
-      value: 'FOLDER',
-      says: "folder that no path may leave (default: the current one, or the file's)",
-    },
+    root: rootOption,
   },
   async run(given) {
     const terminal = newTerminal();

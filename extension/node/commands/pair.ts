@@ -5,7 +5,7 @@ import { findingJson } from '../../../core/files/tapsJson';
 import { type Finding, finding, Refusal } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
 import { draftPair, type PairFile } from '../../../core/pipeline/draftPair';
-import { type Arguments, type Command, exit, UsageError } from '../commandLine';
+import { type Arguments, type Command, exit, rootOption, UsageError } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
 import { newTerminal } from '../terminal';
 import { rootFor } from '../workplace';
@@ -46,11 +46,7 @@ export const pair: Command = {
     },
     rate: { type: 'string', value: 'HZ', says: 'samples a second, where the files do not say' },
     title: { type: 'string', value: 'TEXT', says: 'title (default: the name of the document)' },
-    root: {
-      type: 'string',
-      value: 'FOLDER',
-      says: "folder that no path may leave (default: the current one, or the document's)",
-    },
+    root: rootOption,
   },
   run,
 };

@@ -106,7 +106,7 @@ describe('mains is not', () => {
         limited(sum(wave(17, rate), scaled(wave(31, rate), 0.7), scaled(normals(s, length), 0.05)), 3),
     ],
   ])('%s', async (_, make) => {
-    for (let seed = 1; seed <= seeds; seed++) {
+    for (let seed = 1; seed <= 8; seed++) {
       for (const rate of [1000, 2500, 8000]) {
         const codes = await codesOf([make(seed, rate)], rate);
         expect(codes.includes('mains'), `seed ${seed} at ${rate} Hz`).toBe(false);
