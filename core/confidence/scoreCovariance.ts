@@ -1,6 +1,6 @@
-import type { NormalSums } from '../statistics/normalSums';
 import { type Transform, transformOf } from '../statistics/transform';
 import type { ResidualSums } from './residualSums';
+import { scoreSequences } from './scoreSequence';
 
 /**
  * Covariance S of `x_r[n-k] e[n]`, summed over all lags in n, as a quadratic form over lags k of every input: the meat of
@@ -44,12 +44,19 @@ export function scoreCovariance(
   while (size < 2 * lags) size *= 2;
   const transform = transformOf(size);
   const empty = () => ({ re: new Float64Array(size), im: new Float64Array(size) });
-  const blocks = Array.from({ length: inputs }, () => Array.from({ length: inputs }, empty));
-  const count = parts.reduce((sum, part) => sum + part.count, 0);
-  const unit = samples / (samples - freedom) / count;
-  for (const part of parts) addPart(blocks, part, window, lags, unit / part.count);
-  const deviations = blocks.map((row, r) => Math.sqrt(Math.max(0, row[r].re[0])));
-  for (const row of blocks) for (const { re, im } of row) transform.forward(re, im);
+  const unit = samples / (samples - freedom);
+  const sequences = scoreSequences({ parts }, window, lags);
+  const deviations = sequences.map((row, r) => Math.sqrt(Math.max(0, unit * row[r][lags - 1])));
+  const blocks = sequences.map((row) =>
+    row.map((sequence) => {
+      const block = empty();
+      for (let lag = 1 - lags; lag < lags; lag++) {
+        block.re[lag < 0 ? size + lag : lag] = unit * sequence[lags - 1 + lag];
+      }
+      transform.forward(block.re, block.im);
+      return block;
+    }),
+  );
 
   return {
     transform,
@@ -76,47 +83,6 @@ export function scoreCovariance(
       }),
     deviation: (r) => deviations[r],
   };
-}
-
-/** Adds the products of one part's correlations, for lags k-l from -(lags - 1) to lags - 1, negative ones from the end. */
-function addPart(
-  blocks: { re: Float64Array }[][],
-  { correlations }: NormalSums,
-  window: number,
-  lags: number,
-  unit: number,
-): void {
-  const inputs = blocks.length;
-  const residual = correlations[inputs][inputs];
-  const weighted = Float64Array.from({ length: window }, (_, j) => unit * parzen(j / window) * residual[j]);
-  for (let r = 0; r < inputs; r++) {
-    for (let s = 0; s < inputs; s++) {
-      const { re } = blocks[r][s];
-      const both = evenRow(correlations[r][s], correlations[s][r]);
-      const middle = correlations[s][r].length - 1;
-      for (let lag = 1 - lags; lag < lags; lag++) {
-        let sum = weighted[0] * both[middle + lag];
-        for (let j = 1; j < window; j++) {
-          sum += weighted[j] * (both[middle + lag - j] + both[middle + lag + j]);
-        }
-        re[lag < 0 ? re.length + lag : lag] += sum;
-      }
-    }
-  }
-}
-
-/** Values over lags from negative to positive. */
-function evenRow(ahead: Float64Array, behind: Float64Array): Float64Array {
-  const last = ahead.length - 1;
-  return Float64Array.from({ length: 2 * last + 1 }, (_, i) =>
-    i < last ? behind[last - i] : ahead[i - last],
-  );
-}
-
-/** Parzen's window, 1 at 0 and 0 at 1. */
-function parzen(share: number): number {
-  const rest = 1 - share;
-  return share <= 0.5 ? 1 - 6 * share * share * rest : 2 * rest * rest * rest;
 }
 
 type Spectrum = Spectra[number];

@@ -185,7 +185,7 @@ describe('tapwright pair', () => {
       'own.pairing.json',
     );
     expect(status).toBe(0);
-    expect(out).toBe('wrote own.pairing.json: equalise, input 1, desired 2\n');
+    expect(out).toBe('wrote own.pairing.json: equalise, input 1 of own.wav, desired 2 of own.wav\n');
     const designed = tapwright(bench, 'design', 'own.pairing.json', '--json');
     expect(designed.err).toBe('');
     expect(designed.status).toBe(0);
