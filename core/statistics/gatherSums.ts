@@ -84,11 +84,7 @@ async function autocorrelationSums(
 }
 
 /** Σ d² over the n at which the delayed desired signal is not zero, which the stretch of the input need not cover. */
-async function supportedEnergy(
-  read: SignalReader,
-  from: number,
-  to: number,
-): Promise<number> {
+async function supportedEnergy(read: SignalReader, from: number, to: number): Promise<number> {
   let energy = 0;
   const block = 65536;
   for (let start = from; start < to; start += block) {

@@ -22,3 +22,10 @@ export function seededNormal(seed: number): () => number {
 export function normals(seed: number, count: number): Float64Array {
   return Float64Array.from({ length: count }, seededNormal(seed));
 }
+
+/** An autoregression of the first order driven by standard normal numbers. */
+export function autoregression(count: number, seed: number, pole: number): Float64Array {
+  const row = normals(seed, count);
+  for (let n = 1; n < count; n++) row[n] += pole * row[n - 1];
+  return row;
+}

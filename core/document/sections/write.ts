@@ -6,8 +6,8 @@ import { wholeIn } from '../checks/numbers';
 import { folderPath } from '../checks/relativePath';
 import { oneOf, text } from '../checks/texts';
 import { type Language, languages, orders, type PairingDocument } from '../pairingDocument';
-import { attributes } from './attributes';
 import { defaultSymbol, longestSymbol, symbolFault } from '../symbol';
+import { attributes } from './attributes';
 
 /** Samples of the test vectors at most. */
 const longestVectors = 65_536;

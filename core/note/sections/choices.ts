@@ -2,6 +2,7 @@ import { decibels, powerDecibels } from '../../figures/decibels';
 import { counted, grouped, significant } from '../../figures/numbers';
 import { duration, frequency, samplesAndTime } from '../../figures/units';
 import type { DesignResult } from '../../pipeline/designResult';
+import { noiseGains } from '../../suitability/pair/spectralNulls';
 import { bullets, code, name, section, table } from '../markdown';
 import { responseShape } from '../responseShape';
 import { wantedSignalHides, wantedSignalInFit } from '../wantedSignal';
@@ -10,13 +11,14 @@ import { wantedSignalHides, wantedSignalInFit } from '../wantedSignal';
 export function choices(result: DesignResult): string {
   return section(
     'Length, delay, regularisation, windowing',
-    'Chosen by the engineer in the pairing document; this note compares no alternatives. What the result says about each choice:',
+    'Chosen by the engineer in the pairing document; `tapwright choose` holds them against other values by cross-validation. What the result says about each choice:',
     bullets([
       length(result),
       delay(result),
       regularisation(result),
       windowing(result),
       preparation(result),
+      ...noise(result),
       ...shape(result),
     ]),
     shapes(result),
@@ -94,6 +96,18 @@ function preparation({ document, means, inputs, desired }: DesignResult): string
   return band === null
     ? `${mean} The error is not weighted to a band.`
     : `${mean} **Error weighted to ${frequency(band.from)} to ${frequency(band.to)};** NMSE is of the signals so weighted.`;
+}
+
+/** What an equaliser does to white noise on its inputs, and how to have less of it. */
+function noise({ document, coefficients, inputs }: DesignResult): string[] {
+  if (document.job !== 'equalise') return [];
+  const gains = noiseGains(coefficients).map((gain, r) => {
+    const of = inputs.length === 1 ? '' : `input ${name(inputs[r])}: `;
+    return `${of}${decibels(powerDecibels(gain))}`;
+  });
+  return [
+    `**Noise gain ${gains.join('; ')}** (Σ w²): by so much the filter raises the power of white noise on its input. More regularisation lowers it and raises the error.`,
+  ];
 }
 
 /** Symmetry and fixed gain, what came of them and what they cost. */

@@ -18,8 +18,13 @@ export interface Chunks {
   findings: Finding[];
 }
 
-/** Sizes that writers to a pipe leave, who cannot go back and fill them in: the largest, or the largest of whole blocks. */
-const unknownSizes = [0xffffffff, 0x7ffff000, 0x7fffffff];
+/**
+ * Sizes that writers to a pipe leave, who cannot go back and fill them in: the largest of 32 or 31 bits, or what whole
+ * frames and the header leave of it (common practice).
+ */
+function standsForUnknown(declared: number): boolean {
+  return declared >= 0xffff0000 || (declared >= 0x7fff0000 && declared <= 0x7fffffff);
+}
 
 /** Chunks looked at before the file is given up: no writer makes more before its data. */
 const mostChunks = 10_000;
@@ -62,7 +67,7 @@ function dataChunk(
   findings: Finding[],
 ): Chunk {
   const there = source.size - from;
-  const open = (declared > there && unknownSizes.includes(declared)) || (declared === 0 && there > 0);
+  const open = (declared > there && standsForUnknown(declared)) || (declared === 0 && there > 0);
   if (open) {
     findings.push(finding('open-data', { declared, there }, { file }));
     return { id: 'data', from, size: there, declared: there };

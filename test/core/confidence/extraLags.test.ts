@@ -1,50 +1,18 @@
 import { describe, expect, it } from 'vitest';
 import { residualFindings } from '../../../core/confidence/residualFindings';
-import { residualSums } from '../../../core/confidence/residualSums';
-import {
-  type ResidualTests,
-  residualLags,
-  residualTests,
-  residualWindow,
-} from '../../../core/confidence/residuals';
-import type { Job } from '../../../core/document/pairingDocument';
-import type { Take } from '../../../core/pair/take';
+import type { ResidualTests } from '../../../core/confidence/residuals';
 import type { FilterShape } from '../../../core/statistics/gatherSums';
-import { estimateOf } from '../../support/estimates';
-import { normals } from '../../support/random';
-import { convolve, pace, takeOf } from '../../support/takes';
+import { estimateOf, residualTestsOf } from '../../support/estimates';
+import { autoregression, normals } from '../../support/random';
+import { convolve, takeOf } from '../../support/takes';
 
 // Against known truth, by seeded simulation.
 
 const samples = 2500;
 const shape: FilterShape = { length: 20, delay: 0, windowing: 'covariance' };
 
-function autoregression(seed: number, pole: number): Float64Array {
-  const row = normals(seed, samples);
-  for (let n = 1; n < samples; n++) row[n] += pole * row[n - 1];
-  return row;
-}
-
 /** A decaying path of so many taps. */
 const path = (taps: number) => Array.from({ length: taps }, (_, k) => Math.cos(0.7 * k) * 0.9 ** k);
-
-async function testsOf(
-  takes: readonly Take[],
-  of = shape,
-  job: Job = 'identify',
-  regularisation = 1e-6,
-): Promise<ResidualTests> {
-  const estimate = await estimateOf(takes, of, regularisation);
-  const window = residualWindow(samples);
-  const sums = await residualSums(
-    takes,
-    of.windowing,
-    estimate.filter,
-    residualLags(of.length, window),
-    pace,
-  );
-  return residualTests(estimate, sums, window, job);
-}
 
 const codes = (tests: ResidualTests, length = shape.length, inputs = ['a', 'b']) =>
   residualFindings(tests, inputs.slice(0, tests.inputs.length), length).map(({ code }) => code);
@@ -72,9 +40,9 @@ const colours: [string, number, number, (n: number) => number][] = [
 
 describe.each(colours)('taps at further lags: %s', (_, inputPole, noisePole, levelAt) => {
   const takeFor = (seed: number, response: number[], level: number, advance = 0) => {
-    const x = autoregression(seed, inputPole).map((v, n) => levelAt(n) * v);
+    const x = autoregression(samples, seed, inputPole).map((v, n) => levelAt(n) * v);
     const y = convolve(x, response);
-    const noise = autoregression(seed + 7, noisePole).map((v, n) => levelAt(n) * v);
+    const noise = autoregression(samples, seed + 7, noisePole).map((v, n) => levelAt(n) * v);
     const d = y.map((_value, n) => (y[n + advance] ?? 0) + level * noise[n]);
     return takeOf([x], d);
   };
@@ -82,7 +50,7 @@ describe.each(colours)('taps at further lags: %s', (_, inputPole, noisePole, lev
   it('is silent on a filter as long as the path in at least 90 of 100 seeds', async () => {
     let significant = 0;
     const found = await count(100, async (seed) => {
-      const tests = await testsOf([takeFor(seed, path(20), 0.5)]);
+      const tests = await residualTestsOf([takeFor(seed, path(20), 0.5)], shape);
       if (tests.extra?.some(({ probability }) => probability < 0.01)) significant++;
       return codes(tests);
     });
@@ -92,13 +60,17 @@ describe.each(colours)('taps at further lags: %s', (_, inputPole, noisePole, lev
   });
 
   it('finds a path that is longer than the filter, and nothing before it', async () => {
-    const found = await count(20, async (seed) => codes(await testsOf([takeFor(seed, path(40), 0.2)])));
+    const found = await count(20, async (seed) =>
+      codes(await residualTestsOf([takeFor(seed, path(40), 0.2)], shape)),
+    );
     expect(found['taps-missing']).toBe(20);
     expect(found['delay-missing']).toBeLessThanOrEqual(2);
   });
 
   it('finds a path that begins before the filter, and nothing after it', async () => {
-    const found = await count(20, async (seed) => codes(await testsOf([takeFor(seed, path(10), 0.2, 3)])));
+    const found = await count(20, async (seed) =>
+      codes(await residualTestsOf([takeFor(seed, path(10), 0.2, 3)], shape)),
+    );
     expect(found['delay-missing']).toBe(20);
     expect(found['taps-missing']).toBeLessThanOrEqual(2);
   });
@@ -106,11 +78,11 @@ describe.each(colours)('taps at further lags: %s', (_, inputPole, noisePole, lev
 
 describe('what is gained by further taps', () => {
   it('is what a longer filter gains', async () => {
-    const x = autoregression(5, 0.6);
+    const x = autoregression(samples, 5, 0.6);
     const noise = normals(6, samples);
     const d = convolve(x, path(30)).map((y, n) => y + 0.1 * noise[n]);
     const take = takeOf([x], d);
-    const tests = await testsOf([take]);
+    const tests = await residualTestsOf([take], shape);
     const error = async (length: number) => {
       const { filter } = await estimateOf([take], { ...shape, length }, 1e-6);
       const y = convolve(x, filter.coefficients[0]);
@@ -124,69 +96,31 @@ describe('what is gained by further taps', () => {
   });
 
   it('names the input with the most, and a caution from half a decibel on', async () => {
-    const x = [autoregression(1, 0.5), autoregression(2, 0.5)];
+    const x = [autoregression(samples, 1, 0.5), autoregression(samples, 2, 0.5)];
     const y = [convolve(x[0], path(20)), convolve(x[1], path(40))];
     const noise = normals(3, samples);
     const take = takeOf(
       x,
       y[0].map((v, n) => v + y[1][n] + 0.05 * noise[n]),
     );
-    const found = residualFindings(await testsOf([take]), ['a', 'b'], 20);
+    const found = residualFindings(await residualTestsOf([take], shape), ['a', 'b'], 20);
     expect(found).toMatchObject([{ code: 'taps-missing', severity: 'caution', channel: 'b' }]);
     const weak = takeOf(
       x,
       y[0].map((v, n) => v + y[1][n] + noise[n]),
     );
-    expect(residualFindings(await testsOf([weak]), ['a', 'b'], 20)).toMatchObject([
+    expect(residualFindings(await residualTestsOf([weak], shape), ['a', 'b'], 20)).toMatchObject([
       { code: 'taps-missing', severity: 'note', channel: 'b' },
     ]);
   });
 
   it('looks at no input ahead of a predictor, and at nothing where there are too few samples', async () => {
-    const x = autoregression(4, 0.9);
+    const x = autoregression(samples, 4, 0.9);
     const predictor = { ...shape, delay: -1 };
-    const tests = await testsOf([takeOf([x], x)], predictor, 'predict');
+    const tests = await residualTestsOf([takeOf([x], x)], predictor, 'predict');
     expect(tests.extra?.map(({ side }) => side)).toEqual(['after']);
     expect(codes(tests)).toEqual([]);
-    const few = await testsOf([takeOf([x.slice(0, 300)], x.slice(1, 301))]);
+    const few = await residualTestsOf([takeOf([x.slice(0, 300)], x.slice(1, 301))], shape);
     expect([few.extra, few.inputs[0].bound]).toEqual([null, Number.NaN]);
-  });
-});
-
-describe('cross-correlation of residual and input', () => {
-  it.each(['covariance', 'autocorrelation'] as const)('is zero inside the filter: %s', async (windowing) => {
-    const x = autoregression(8, 0.7);
-    const noise = normals(9, samples);
-    const d = convolve(x, path(40)).map((y, n) => y + noise[n]);
-    const fit = [
-      { from: 30, to: 1200 },
-      { from: 1300, to: 2400 },
-    ];
-    const take = takeOf([x], d, { fit });
-    const tests = await testsOf([take], { ...shape, windowing }, 'identify', 0);
-    expect(tests.inputs[0].inside).toBeLessThan(1e-12);
-    expect(tests.inputs[0].fromRegularisation).toBe(0);
-    const ridge = await testsOf([take], { ...shape, windowing }, 'identify', 0.01);
-    expect(ridge.inputs[0].inside).toBeCloseTo(ridge.inputs[0].fromRegularisation, 12);
-  });
-
-  it('has 95 % of the lags beyond within its bounds, for coloured signals too', async () => {
-    let inside = 0;
-    let all = 0;
-    for (let seed = 1; seed <= 120; seed++) {
-      const x = autoregression(50 * seed, 0.8);
-      const noise = autoregression(50 * seed + 1, 0.8);
-      const d = convolve(x, [1, 0.5]).map((y, n) => y + noise[n]);
-      const { inputs } = await testsOf([takeOf([x], d)], { ...shape, length: 4 });
-      // The lags next to the filter are smaller, since its taps took part of them: those further off are compared.
-      inputs[0].values.forEach((value, i) => {
-        const lag = i + inputs[0].from;
-        if (lag > -16 && lag < 20) return;
-        if (Math.abs(value) <= inputs[0].bound) inside++;
-        all++;
-      });
-    }
-    expect(inside / all).toBeGreaterThan(0.92);
-    expect(inside / all).toBeLessThan(0.98);
   });
 });
