@@ -23,7 +23,9 @@ export interface Chunks {
  * frames and the header leave of it (common practice).
  */
 function standsForUnknown(declared: number): boolean {
-  return declared >= 0xffff0000 || (declared >= 0x7fff0000 && declared <= 0x7fffffff);
+  return (
+    (declared >= 0x7fff0000 && declared <= 0x7fffffff) || (declared >= 0xffff0000 && declared <= 0xffffffff)
+  );
 }
 
 /** Chunks looked at before the file is given up: no writer makes more before its data. */
