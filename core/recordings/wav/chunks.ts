@@ -69,7 +69,10 @@ function dataChunk(
   findings: Finding[],
 ): Chunk {
   const there = source.size - from;
-  const open = (declared > there && standsForUnknown(declared)) || (declared === 0 && there > 0);
+  const open =
+    declared === 0xffffffff ||
+    (declared > there && standsForUnknown(declared)) ||
+    (declared === 0 && there > 0);
   if (open) {
     findings.push(finding('open-data', { declared, there }, { file }));
     return { id: 'data', from, size: there, declared: there };
