@@ -1,4 +1,4 @@
-import { conjugatePlace, type Transform, transformOf } from './transform';
+import { type Transform, transformOf } from './transform';
 
 /** A complex spectrum in bit-reversed order. */
 export interface Spectrum {
@@ -23,10 +23,11 @@ export interface BlockSpectra {
   readonly packed: readonly Spectrum[];
   /** Moves on by one block. Each signal has at most `block` samples; missing ones count as zero. */
   push(signals: readonly Float64Array[]): void;
-  /** Writes the spectrum of [previous block, current block] of one signal. */
-  joined(signal: number, into: Spectrum): void;
-  /** Forgets the previous blocks. */
-  clear(): void;
+  /**
+   * Adds `Z conj(X)` to a spectrum, Z that of the current block of packed signals 2t and 2t+1 and X that of
+   * [previous block, current block] of one signal.
+   */
+  addProduct(t: number, signal: number, sum: Spectrum): void;
 }
 
 /** The block that suits a filter of the given length: a power of two, at least 1,024 and at least the length. */
@@ -58,17 +59,11 @@ export function newBlockSpectra(signals: number, block: number): BlockSpectra {
         transform.forward(packed[t].re, packed[t].im);
       }
     },
-    joined(signal, into) {
+    addProduct(t, signal, sum) {
       const now = packed[signal >> 1];
       const before = previous[signal >> 1];
-      if (signal % 2 === 0) joinReal(now, before, into);
-      else joinImaginary(now, before, into);
-    },
-    clear() {
-      for (const { re, im } of packed) {
-        re.fill(0);
-        im.fill(0);
-      }
+      if (signal % 2 === 0) addReal(sum, packed[t], now, before);
+      else addImaginary(sum, packed[t], now, before);
     },
   };
 }
@@ -78,24 +73,52 @@ function load(part: Float64Array, samples: Float64Array | undefined): void {
   if (samples !== undefined) part.set(samples);
 }
 
-// Even frequencies stand in the first half of a bit-reversed spectrum, odd ones in the second.
+// Even frequencies stand in the first half of a bit-reversed spectrum, odd ones in the second. The spectrum of a real
+// signal has conjugates at conjugate places, which in an octave [h, 2h) of places mirror each other: one is computed,
+// both are used. The current block starts at sample `block` of the joined one, so that its own spectrum, as part of X
+// and as Z, takes the odd frequencies' signs.
 
-function joinReal(now: Spectrum, before: Spectrum, into: Spectrum): void {
-  const half = into.re.length / 2;
-  for (let p = 0; p < 2 * half; p++) {
-    const q = conjugatePlace(p);
-    const sign = p < half ? 0.5 : -0.5;
-    into.re[p] = 0.5 * (before.re[p] + before.re[q]) + sign * (now.re[p] + now.re[q]);
-    into.im[p] = 0.5 * (before.im[p] - before.im[q]) + sign * (now.im[p] - now.im[q]);
+function addReal(sum: Spectrum, z: Spectrum, now: Spectrum, before: Spectrum): void {
+  const { re: bRe, im: bIm } = before;
+  const { re: nRe, im: nIm } = now;
+  addAt(sum, z, 0, bRe[0] + nRe[0]);
+  addAt(sum, z, 1, bRe[1] + nRe[1]);
+  for (let h = 2; h < bRe.length; h *= 2) {
+    const sign = 2 * h < bRe.length ? 1 : -1;
+    for (let p = h, q = 2 * h - 1; p < q; p++, q--) {
+      const xRe = 0.5 * (bRe[p] + bRe[q] + sign * (nRe[p] + nRe[q]));
+      const xIm = 0.5 * (bIm[p] - bIm[q] + sign * (nIm[p] - nIm[q]));
+      addPair(sum, z, p, q, sign * xRe, sign * xIm);
+    }
   }
 }
 
-function joinImaginary(now: Spectrum, before: Spectrum, into: Spectrum): void {
-  const half = into.re.length / 2;
-  for (let p = 0; p < 2 * half; p++) {
-    const q = conjugatePlace(p);
-    const sign = p < half ? 0.5 : -0.5;
-    into.re[p] = 0.5 * (before.im[p] + before.im[q]) + sign * (now.im[p] + now.im[q]);
-    into.im[p] = 0.5 * (before.re[q] - before.re[p]) + sign * (now.re[q] - now.re[p]);
+function addImaginary(sum: Spectrum, z: Spectrum, now: Spectrum, before: Spectrum): void {
+  const { re: bRe, im: bIm } = before;
+  const { re: nRe, im: nIm } = now;
+  addAt(sum, z, 0, bIm[0] + nIm[0]);
+  addAt(sum, z, 1, bIm[1] + nIm[1]);
+  for (let h = 2; h < bRe.length; h *= 2) {
+    const sign = 2 * h < bRe.length ? 1 : -1;
+    for (let p = h, q = 2 * h - 1; p < q; p++, q--) {
+      const xRe = 0.5 * (bIm[p] + bIm[q] + sign * (nIm[p] + nIm[q]));
+      const xIm = 0.5 * (bRe[q] - bRe[p] + sign * (nRe[q] - nRe[p]));
+      addPair(sum, z, p, q, sign * xRe, sign * xIm);
+    }
   }
+}
+
+function addAt(sum: Spectrum, z: Spectrum, p: number, x: number): void {
+  sum.re[p] += z.re[p] * x;
+  sum.im[p] += z.im[p] * x;
+}
+
+/** `Z conj(X)` at a place and at its conjugate, where X is conjugate too. */
+function addPair(sum: Spectrum, z: Spectrum, p: number, q: number, xRe: number, xIm: number): void {
+  const { re, im } = sum;
+  const { re: zRe, im: zIm } = z;
+  re[p] += zRe[p] * xRe + zIm[p] * xIm;
+  im[p] += zIm[p] * xRe - zRe[p] * xIm;
+  re[q] += zRe[q] * xRe - zIm[q] * xIm;
+  im[q] += zIm[q] * xRe + zRe[q] * xIm;
 }

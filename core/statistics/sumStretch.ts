@@ -25,7 +25,6 @@ export async function sumStretch(
   const sums = emptySums(inputs, length);
   const spectra = newBlockSpectra(inputs + 1, blockFor(length));
   const products = newProducts(inputs, spectra);
-  const scratch = newSpectrum(spectra.transform.size);
   const history = (await read(stretch.from, stretch.from, length - 1)).inputs.map((samples) =>
     samples.slice(),
   );
@@ -33,7 +32,7 @@ export async function sumStretch(
 
   await eachBlock(read, stretch, spectra.block, 0, ({ inputs: x, desired }, _, to) => {
     spectra.push([...x, desired]);
-    addProducts(products, spectra, scratch);
+    addProducts(products, spectra);
     for (let k = 0; k < desired.length; k++) sums.desiredEnergy += desired[k] * desired[k];
     return pace.step('statistics', to - stretch.from, stretch.to - stretch.from);
   });
@@ -53,21 +52,12 @@ function newProducts(inputs: number, spectra: BlockSpectra): Products {
   return Array.from({ length: inputs }, () => spectra.packed.map(() => newSpectrum(spectra.transform.size)));
 }
 
-function addProducts(products: Products, spectra: BlockSpectra, x: Spectrum): void {
-  const size = spectra.transform.size;
-  for (let r = 0; r < products.length; r++) {
-    // The current block starts at sample `block` of the joined one: its own spectrum takes the odd signs.
-    spectra.joined(r, x);
-    for (let t = 0; t < spectra.packed.length; t++) {
-      const z = spectra.packed[t];
-      const sum = products[r][t];
-      for (let p = 0; p < size; p++) {
-        const sign = p < size / 2 ? 1 : -1;
-        sum.re[p] += sign * (z.re[p] * x.re[p] + z.im[p] * x.im[p]);
-        sum.im[p] += sign * (z.im[p] * x.re[p] - z.re[p] * x.im[p]);
-      }
-    }
-  }
+function addProducts(products: Products, spectra: BlockSpectra): void {
+  products.forEach((row, r) => {
+    row.forEach((sum, t) => {
+      spectra.addProduct(t, r, sum);
+    });
+  });
 }
 
 function finishProducts(products: Products, spectra: BlockSpectra, sums: NormalSums): void {

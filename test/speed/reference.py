@@ -18,7 +18,7 @@ def load(name, dtype="<f8"):
 
 
 def correlations_chunked():
-    x, d, lags, chunk = load("x.f64"), load("d.f64"), 1024, 65536
+    x, d, lags, chunk = load("x.f64"), load("d.f64"), 1024, 8192
 
     def work():
         r = np.zeros(lags)

@@ -7,7 +7,7 @@ from scipy.linalg import cho_factor, cho_solve
 from scipy.signal import oaconvolve
 
 rate, data = wavfile.read(sys.argv[1])
-lags, chunk = 1024, 65536
+lags, chunk = 1024, 8192
 to = int(round(float(sys.argv[2]) * rate))
 x, d = (data[:, c].astype(float) / 32768 for c in (0, 1))
 x -= x[:to].mean()
