@@ -4,7 +4,7 @@ import { exactSums } from '../../../core/numbers/exactSums';
 import type { IntegerFormat } from '../../../core/numbers/scaling';
 import { integerSimulator } from '../../../core/numbers/simulate';
 import { wordRange } from '../../../core/numbers/words';
-import { worstCase } from '../../../core/numbers/worstCase';
+import { accumulatorBound, worstCase } from '../../../core/numbers/worstCase';
 import { seededUniform } from '../../support/random';
 
 /** The contract's arithmetic in big integers alone: every addition on its own, then floor, then the output word. */
@@ -125,6 +125,40 @@ describe('exactSums', () => {
       }
       expect(BigInt(sums[n])).toBe(want);
     }
+  });
+});
+
+describe('accumulatorBound', () => {
+  // Common practice: max|y| ≤ max|x| Σ|w|, which the two-sided bound never passes and inputs of both signs reach.
+  it('keeps within max|x| Σ|w| and covers every sum of inputs that keep to their ranges', () => {
+    fc.assert(
+      fc.property(cases, fc.integer({ min: 0, max: 100 }), ({ format, values, inputs }, share) => {
+        const largest = Math.floor((wordRange(format.inputWord).max * share) / 100);
+        const range = { min: -largest, max: largest };
+        const rows = values.map((row) => Float64Array.from(row));
+        const bare = { ...format, fractionBits: 0 };
+        const bound = accumulatorBound(
+          rows,
+          bare,
+          rows.map(() => range),
+        );
+        const sum = values.flat().reduce((total, v) => total + BigInt(Math.abs(v)), 0n);
+        expect(bound.max).toBe(sum * BigInt(largest));
+        expect(bound.min).toBe(-sum * BigInt(largest));
+        const M = values[0].length;
+        for (let n = M - 1; n < inputs[0].length; n++) {
+          let acc = 0n;
+          values.forEach((row, r) => {
+            row.forEach((v, k) => {
+              const x = Math.max(range.min, Math.min(range.max, inputs[r][n - k]));
+              acc += BigInt(v) * BigInt(x);
+            });
+          });
+          expect(acc <= bound.max && acc >= bound.min).toBe(true);
+        }
+      }),
+      { numRuns: 500 },
+    );
   });
 });
 
