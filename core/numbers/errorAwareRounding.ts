@@ -8,6 +8,8 @@ export interface RoundingCost {
   size: number;
   /** Element of H; asked for i ≥ j only. */
   element(i: number, j: number): number;
+  /** H by products, where it is too large for its elements to be looked up one by one; its diagonal beside them. */
+  products?: { diagonal: Float64Array; multiply(v: Float64Array): Float64Array };
   /** Lower-triangular G with `H = G Gᵀ`, row-major; null where none is at hand. */
   factor: Float64Array | null;
 }
@@ -40,8 +42,9 @@ export function roundingCost(values: Float64Array, targets: Float64Array, cost: 
 export function gradientOf(
   values: Float64Array,
   targets: Float64Array,
-  { size, element }: RoundingCost,
+  { size, element, products }: RoundingCost,
 ): Float64Array {
+  if (products !== undefined) return products.multiply(values.map((value, i) => value - targets[i]));
   const gradient = new Float64Array(size);
   for (let i = 0; i < size; i++) {
     const delta = values[i] - targets[i];
@@ -82,9 +85,9 @@ function improve(
   cost: RoundingCost,
   { min, max }: WordRange,
 ): void {
-  const { size, element } = cost;
+  const { size } = cost;
   const gradient = gradientOf(values, targets, cost);
-  const diagonal = Float64Array.from({ length: size }, (_, i) => element(i, i));
+  const diagonal = diagonalOf(cost);
   // Every step lowers the cost, so that there is an end; the bound only keeps a poor start from taking long.
   for (let taken = 0; taken < 16 * size; taken++) {
     let best = -1;
@@ -103,14 +106,26 @@ function improve(
   }
 }
 
+/** What a step of each value alone would cost. */
+export function diagonalOf({ size, element, products }: RoundingCost): Float64Array {
+  return products?.diagonal ?? Float64Array.from({ length: size }, (_, i) => element(i, i));
+}
+
 /** Moves one value and keeps the gradient true. */
 export function takeStep(
   values: Float64Array,
   gradient: Float64Array,
-  { size, element }: RoundingCost,
+  { size, element, products }: RoundingCost,
   at: number,
   step: number,
 ): void {
   values[at] += step;
+  if (products !== undefined) {
+    const unit = new Float64Array(size);
+    unit[at] = step;
+    const change = products.multiply(unit);
+    for (let i = 0; i < size; i++) gradient[i] += change[i];
+    return;
+  }
   for (let i = 0; i < size; i++) gradient[i] += step * (i >= at ? element(i, at) : element(at, i));
 }

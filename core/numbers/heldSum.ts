@@ -1,4 +1,4 @@
-import { gradientOf, type RoundingCost, takeStep } from './errorAwareRounding';
+import { diagonalOf, gradientOf, type RoundingCost, takeStep } from './errorAwareRounding';
 import type { WordRange } from './words';
 
 /** A weighted sum that the integers must have exactly: `Σ weights[i] values[i] = total`, weights -2 to 2. */
@@ -31,18 +31,19 @@ export function holdSum(
   held: HeldSum,
 ): boolean {
   const gradient = gradientOf(values, targets, cost);
+  const diagonal = diagonalOf(cost);
   const { weights } = held;
   let missing = weights.reduce((sum, weight, i) => sum - weight * values[i], held.total);
   while (missing !== 0) {
     const towards = Math.sign(missing);
     const gains = Math.abs(missing) > 1 ? [towards, 2 * towards] : [towards];
-    const [move] = gains.flatMap((gain) => cheapest(values, gradient, cost, range, weights, gain, 1));
+    const [move] = gains.flatMap((gain) => cheapest(values, gradient, diagonal, range, weights, gain, 1));
     if (move === undefined) return false;
     missing -= weights[move.at] * move.step;
     takeStep(values, gradient, cost, move.at, move.step);
   }
   for (let taken = 0; taken < 4 * cost.size; taken++) {
-    const pair = bestPair(values, gradient, cost, range, weights);
+    const pair = bestPair(values, gradient, diagonal, cost, range, weights);
     if (pair === null) break;
     for (const { at, step } of pair) takeStep(values, gradient, cost, at, step);
   }
@@ -53,7 +54,7 @@ export function holdSum(
 function cheapest(
   values: Float64Array,
   gradient: Float64Array,
-  { element }: RoundingCost,
+  diagonal: Float64Array,
   { min, max }: WordRange,
   weights: Float64Array,
   gain: number,
@@ -64,7 +65,7 @@ function cheapest(
     if (Math.abs(weights[at]) !== Math.abs(gain)) continue;
     const step = gain / weights[at];
     if (values[at] + step < min || values[at] + step > max) continue;
-    moves.push({ at, step, rise: 2 * step * gradient[at] + element(at, at) });
+    moves.push({ at, step, rise: 2 * step * gradient[at] + diagonal[at] });
   }
   return moves.sort((a, b) => a.rise - b.rise).slice(0, most);
 }
@@ -73,6 +74,7 @@ function cheapest(
 function bestPair(
   values: Float64Array,
   gradient: Float64Array,
+  diagonal: Float64Array,
   cost: RoundingCost,
   range: WordRange,
   weights: Float64Array,
@@ -80,14 +82,14 @@ function bestPair(
   let best: [Move, Move] | null = null;
   let least = 0;
   for (const gain of [1, 2]) {
-    const ups = cheapest(values, gradient, cost, range, weights, gain, tried);
-    const downs = cheapest(values, gradient, cost, range, weights, -gain, tried);
+    const ups = cheapest(values, gradient, diagonal, range, weights, gain, tried);
+    const downs = cheapest(values, gradient, diagonal, range, weights, -gain, tried);
     for (const a of ups) {
       for (const b of downs) {
         if (a.at === b.at) continue;
         const cross = a.at > b.at ? cost.element(a.at, b.at) : cost.element(b.at, a.at);
         const rise = a.rise + b.rise + 2 * a.step * b.step * cross;
-        const floor = -1e-9 * (cost.element(a.at, a.at) + cost.element(b.at, b.at));
+        const floor = -1e-9 * (diagonal[a.at] + diagonal[b.at]);
         if (rise < least && rise < floor) {
           least = rise;
           best = [a, b];

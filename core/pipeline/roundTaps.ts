@@ -4,8 +4,11 @@ import { type HeldSum, holdSum } from '../numbers/heldSum';
 import { type Scaling, scaledCoefficients } from '../numbers/scaling';
 import { clamp, powerOfTwo, roundHalfUp, type WordRange, wordRange } from '../numbers/words';
 import { factorCholesky } from '../solvers/cholesky';
+import type { ShiftStructure } from '../solvers/displacement';
 import { unfold } from '../solvers/fold';
+import { normalOperator } from '../solvers/normalMultiply';
 import { elementsOf, type NormalSystem } from '../solvers/normalSystem';
+import { structuredDiagonal, structuredElements } from '../solvers/structuredElements';
 import type { Fit } from './fitPair';
 
 /** Unknowns up to which a factor is computed for the rounding where the solver has none. */
@@ -25,7 +28,13 @@ export function tapRounder(fit: Fit, regularisation: number, scaling: Scaling, i
   const { size, scale } = fit.system;
   const scaled = scaledCoefficients(fit.free, scaling);
   const length = fit.fold.free;
-  const bare = elementsOf(fit.system, regularisation);
+  const structure = structureOf(fit.system);
+  const bare =
+    structure === null
+      ? elementsOf(fit.system, regularisation)
+      : structuredElements(structure, regularisation);
+  const multiply = structure && normalOperator(structure, regularisation);
+  const diagonal = structure && structuredDiagonal(structure, regularisation);
   let factor: Float64Array | null | undefined;
   return (fractionBits, word, rounding) => {
     const step = powerOfTwo(fractionBits);
@@ -41,10 +50,21 @@ export function tapRounder(fit: Fit, regularisation: number, scaling: Scaling, i
       return (s * scaling.outputCount) / (scaling.inputCount[r] * step);
     });
     const aware = rounding === 'error-aware';
-    if (aware && factor === undefined) factor = fit.solution.factor?.factor ?? factorOf(fit.system, bare);
+    if (aware && factor === undefined) {
+      factor = structure === null ? (fit.solution.factor?.factor ?? factorOf(fit.system, bare)) : null;
+    }
     const cost: RoundingCost = {
       size,
       element: aware ? (i, j) => units[i] * units[j] * bare(i, j) : (i, j) => (i === j ? 1 : 0),
+      ...(aware && multiply !== null && diagonal !== null
+        ? {
+            products: {
+              diagonal: diagonal.map((value, i) => value * units[i] * units[i]),
+              multiply: (v: Float64Array) =>
+                multiply(v.map((value, i) => value * units[i])).map((value, i) => value * units[i]),
+            },
+          }
+        : {}),
       factor: aware && factor ? factor.map((value, at) => value * units[Math.floor(at / size)]) : null,
     };
     const values = aware
@@ -60,6 +80,11 @@ export function tapRounder(fit: Fit, regularisation: number, scaling: Scaling, i
       scaled.map((_, r) => values.slice(r * length, (r + 1) * length)),
     );
   };
+}
+
+/** The shift structure of a matrix that is too large to be formed, and for which no factor is made. */
+function structureOf({ matrix, size }: NormalSystem): ShiftStructure | null {
+  return size > mostToFactor && 'structure' in matrix ? (matrix.structure ?? null) : null;
 }
 
 /** Antisymmetric taps need their negatives too. */
