@@ -1,6 +1,6 @@
 import { newSpectrum, type Spectrum } from '../statistics/blockSpectra';
 import type { NormalSums } from '../statistics/normalSums';
-import { type Transform, transformOf } from '../statistics/transform';
+import { sizeFor, type Transform, transformOf } from '../statistics/transform';
 import { toeplitzForms } from './toeplitzForms';
 
 /** `wᵀ R w` for several filters of one length: the energy of their outputs over the summed n. */
@@ -16,8 +16,7 @@ export type OutputEnergy = (taps: readonly Float64Array[], length: number, into:
 export function outputEnergy(sums: NormalSums): OutputEnergy {
   const tables = new Map<number, Tables>();
   return (taps, length, into) => {
-    let size = 4;
-    while (size < 2 * length) size *= 2;
+    const size = sizeFor(2 * length);
     const table = tables.get(size) ?? newTables(sums, size);
     tables.set(size, table);
     for (let t = 0; t < taps.length; t += 2) {

@@ -1,3 +1,4 @@
+import { inner } from '../solvers/vectors';
 import type { Estimate } from './estimate';
 import type { Inverse } from './inverse';
 
@@ -61,10 +62,4 @@ function directions(
     found.push({ direction, size: inner(condition, direction) });
   }
   return found;
-}
-
-function inner(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
-  return sum;
 }

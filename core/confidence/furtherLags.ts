@@ -1,3 +1,4 @@
+import { inner } from '../solvers/vectors';
 import type { Estimate } from './estimate';
 import type { ResidualSums } from './residualSums';
 
@@ -66,10 +67,4 @@ export function furtherLags(
       return rows;
     }),
   };
-}
-
-function inner(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
-  return sum;
 }

@@ -1,4 +1,4 @@
-import { type Transform, transformOf } from '../statistics/transform';
+import { sizeFor, type Transform, transformOf } from '../statistics/transform';
 import type { ResidualSums } from './residualSums';
 import { scoreSequences } from './scoreSequence';
 
@@ -40,8 +40,7 @@ export function scoreCovariance(
   freedom: number,
 ): ScoreCovariance {
   const inputs = parts[0].inputs - 1;
-  let size = 512;
-  while (size < 2 * lags) size *= 2;
+  const size = sizeFor(2 * lags, 512);
   const transform = transformOf(size);
   const empty = () => ({ re: new Float64Array(size), im: new Float64Array(size) });
   const unit = samples / (samples - freedom);

@@ -1,4 +1,4 @@
-import { transformOf } from '../statistics/transform';
+import { sizeFor, transformOf } from '../statistics/transform';
 import type { ResidualSums } from './residualSums';
 
 /**
@@ -16,8 +16,7 @@ export function scoreSequences(
   const inputs = parts[0].inputs - 1;
   const count = parts.reduce((sum, part) => sum + part.count, 0);
   const reach = lags + window;
-  let size = 4;
-  while (size < 2 * reach) size *= 2;
+  const size = sizeFor(2 * reach);
   const transform = transformOf(size);
   const empty = () => ({ re: new Float64Array(size), im: new Float64Array(size) });
   const sums = Array.from({ length: inputs }, (_, r) =>

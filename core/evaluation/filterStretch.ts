@@ -32,8 +32,7 @@ export async function filterStretch(
   const sums = realSums(coefficients);
   const history = coefficients[0].length - 1;
   await eachBlock(read, stretch, blockSamples, history, async ({ inputs, desired }, from, to) => {
-    const pending = visit({ from, inputs, desired, output: sums(inputs) });
-    if (pending !== undefined) await pending;
+    await visit({ from, inputs, desired, output: sums(inputs) });
     await pace.step('filtering', to - stretch.from, stretch.to - stretch.from);
   });
 }

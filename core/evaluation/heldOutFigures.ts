@@ -1,12 +1,12 @@
-import type { TargetFilter } from '../numbers/targetFilter';
+import { type TargetFilter, targetSimulator } from '../numbers/targetFilter';
 import type { Pace } from '../pace';
 import { newWelch, type Welch } from '../spectra/welch';
+import { countsReader } from './countsReader';
 import { blockCount, type ErrorTally, newErrorTally, relativeStandardError } from './errorTally';
 import { type Filter, filterLength } from './filter';
 import { filterStretch } from './filterStretch';
 import { type ErrorFigure, errorFigure } from './fitFigure';
 import type { Run } from './measuredRuns';
-import { targetReader } from './targetReader';
 import { newTargetTally, type TargetFigures, type TargetTally } from './targetTally';
 import { newWeighing } from './weighing';
 
@@ -94,7 +94,8 @@ async function evaluateRun(
   pace: Pace,
   { tally, outside, welch, targetTally }: Sinks,
 ): Promise<void> {
-  const { read, counts } = targetReader(take, filter, target, targetTally);
+  const { read, counts } = countsReader(take, filter, target);
+  const simulate = targetSimulator(target);
   const { outputCount } = target.scaling;
   const weighing = newWeighing(filter.band);
   let error = new Float64Array(0);
@@ -103,8 +104,9 @@ async function evaluateRun(
     const whole = weighing.begin(stretch);
     await filterStretch(read, whole, filter.coefficients, pace, (block) => {
       const { from } = block;
-      const written = counts(from, from + block.desired.length);
-      const weighed = weighing.push([block.desired, block.output, written]);
+      const run = simulate(counts(from, from + block.desired.length));
+      targetTally.count(run);
+      const weighed = weighing.push([block.desired, block.output, run.output]);
       if (weighed === null) return;
       const [desired, output] = weighed.raw;
       const { length } = desired;

@@ -1,11 +1,11 @@
 import { realSums } from '../numbers/exactSums';
-import { type TargetFilter, targetInput, targetSimulator } from '../numbers/targetFilter';
+import { type TargetFilter, targetSimulator } from '../numbers/targetFilter';
 import { clamp, powerOfTwo, roundHalfUp, wordRange } from '../numbers/words';
 import type { Pace } from '../pace';
 import { type Interval, totalLength } from '../pair/intervals';
-import { signalReader } from '../pair/signals';
+import { countsReader } from './countsReader';
 import { newErrorTally } from './errorTally';
-import { type Filter, filterLength } from './filter';
+import type { Filter } from './filter';
 import { filterStretch } from './filterStretch';
 import { errorFigure } from './fitFigure';
 import type { Run } from './measuredRuns';
@@ -50,17 +50,13 @@ export async function studyVariants(
   const weighing = newWeighing(filter.band);
   const tallies = variants.map(newTargetTally);
   const total = runs.reduce((sum, run) => sum + run.samples, 0);
-  const history = filterLength(filter) - 1;
   for (const { take, segments, samples } of runs) {
-    const read = signalReader(take, { means: filter.means, delay: filter.delay });
-    const none = { inputs: take.inputs.map(() => 0), desired: 0 };
-    const readRaw = signalReader(take, { means: none, delay: filter.delay });
+    const { read, counts } = countsReader(take, filter, target);
     for (const stretch of spread(segments, Math.ceil((studySamples * samples) / total))) {
-      await filterStretch(read, weighing.begin(stretch), filter.coefficients, pace, async (block) => {
+      await filterStretch(read, weighing.begin(stretch), filter.coefficients, pace, (block) => {
         const { from, desired, output, inputs } = block;
-        const raw = await readRaw(from, from + desired.length, history);
-        const counts = raw.inputs.map((x, r) => targetInput(target, r, x));
-        const outputs = variants.map((variant) => variant({ inputs, counts, output }));
+        const seen = counts(from, from + desired.length);
+        const outputs = variants.map((variant) => variant({ inputs, counts: seen, output }));
         const weighed = weighing.push([desired, output, ...outputs]);
         if (weighed === null) return;
         const [d, y, ...written] = weighed.inside;

@@ -1,5 +1,5 @@
 import { newSpectrum, type Spectrum } from '../statistics/blockSpectra';
-import { type Transform, transformOf } from '../statistics/transform';
+import { sizeFor, type Transform, transformOf } from '../statistics/transform';
 import { powerOfTwo, roundHalfUp } from './words';
 
 /**
@@ -37,10 +37,9 @@ export function realSums(values: readonly Float64Array[]): ExactSums {
   return transformedSums(values, transformOf(transformSize(length)), (value) => value);
 }
 
+/** Four filters long, so that three quarters of a transform are new. */
 function transformSize(length: number): number {
-  let size = 2048;
-  while (size < 4 * length) size *= 2;
-  return size;
+  return sizeFor(4 * length, 2048);
 }
 
 function directSums(values: readonly Float64Array[]): ExactSums {

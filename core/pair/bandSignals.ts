@@ -1,4 +1,4 @@
-import { type Transform, transformOf } from '../statistics/transform';
+import { sizeFor, type Transform, transformOf } from '../statistics/transform';
 import type { BandFilter } from './bandFilter';
 import type { SignalReader } from './signals';
 
@@ -30,8 +30,7 @@ export function bandPass({ taps, history }: BandFilter): BandPass {
   const response = { re: new Float64Array(0), im: new Float64Array(0) };
 
   function transformFor(length: number): Transform {
-    let size = 1024;
-    while (size < length) size *= 2;
+    const size = sizeFor(length, 1024);
     if (transform?.size === size) return transform;
     transform = transformOf(size);
     response.re = new Float64Array(size);

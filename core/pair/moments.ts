@@ -1,7 +1,7 @@
 import type { Pace } from '../pace';
 import { newRunningMoments, type RunningMoments } from '../statistics/runningMoments';
 import type { Means } from './signals';
-import { signalReader } from './signals';
+import { noMeans, signalReader } from './signals';
 import type { Take } from './take';
 
 /** Means and powers of the signals over the fit intervals of all takes together. */
@@ -27,7 +27,7 @@ export async function measureMoments(
   const inputs = takes[0].inputs.map(() => newRunningMoments());
   const desired = newRunningMoments();
   for (const take of takes) {
-    const none = { inputs: take.inputs.map(() => 0), desired: 0 };
+    const none = noMeans(take.inputs.length);
     const read = signalReader(take, { means: none, delay: 0, reuse: true });
     for (const { from, to } of take.fit) {
       for (let start = from; start < to; start += block) {

@@ -9,6 +9,11 @@ export interface Means {
   desired: number;
 }
 
+/** Means that take nothing off. */
+export function noMeans(inputs: number): Means {
+  return { inputs: new Array(inputs).fill(0), desired: 0 };
+}
+
 /** Samples of a take over a run of n. */
 export interface Signals {
   /** One row an input: x_r[n]. */
@@ -44,10 +49,10 @@ export function signalReader(take: Take, options: ReaderOptions): SignalReader {
   return async (from, to, history = 0) => {
     const inputs = await readTracks(take.inputs, from - history, to, support, inputPool);
     const [desired] = await readTracks([take.desired], from - delay, to - delay, support, desiredPool);
-    inputs.forEach((input, r) => {
-      subtract(input, means.inputs[r]);
+    inputs.forEach(({ samples }, r) => {
+      subtractMean(samples, means.inputs[r]);
     });
-    subtract(desired, means.desired);
+    subtractMean(desired.samples, means.desired);
     return { inputs: inputs.map(padded), desired: padded(desired) };
   };
 }
@@ -115,7 +120,8 @@ function checkFinite(samples: Float64Array, track: Track, start: number): void {
   }
 }
 
-function subtract({ samples }: Stretch, mean: number): void {
+/** Takes a mean off, in place. */
+export function subtractMean(samples: Float64Array, mean: number): void {
   if (mean === 0) return;
   for (let k = 0; k < samples.length; k++) samples[k] -= mean;
 }

@@ -15,10 +15,10 @@ import { type Finding, finding, Refusal, worstFirst } from '../findings/finding'
 import { say } from '../findings/say';
 import { measureMoments } from '../pair/moments';
 import { bandOf } from './askedBand';
-import { attainableLimit } from './attainableLimit';
 import { checkPair, checkSilence } from './checkPair';
 import { fitPair } from './fitPair';
 import type { Host } from './host';
+import { inspectSignals } from './inspectSignals';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
 
 /** What a search over length, delay and regularisation found. */
@@ -104,7 +104,10 @@ async function chooseFor(
     reason: suggestionText(suggestion, folds.blocks, macs),
     heldOut: await heldOutOf(pairing, suggestion, pace, findings),
     opinions: secondOpinions(found, kept),
-    attainableDb: band === null ? await attainableLimit(pairing, moments.means, pace) : null,
+    attainableDb:
+      band === null
+        ? (await inspectSignals(pairing, moments.means, pace)).spectra.together.attainableDb
+        : null,
   };
 }
 

@@ -8,7 +8,7 @@ import { type Finding, finding, Refusal, worstFirst } from '../findings/finding'
 import { overflowFindings } from '../numbers/overflowFindings';
 import { type TargetFilter, targetInput } from '../numbers/targetFilter';
 import { type TestVectors, testVectors } from '../numbers/testVectors';
-import { signalReader } from '../pair/signals';
+import { noMeans, signalReader } from '../pair/signals';
 import { unprovenGain } from '../suitability/pair/unprovenGain';
 import { arithmeticResult } from './arithmeticResult';
 import { confidenceOf } from './confidence';
@@ -124,7 +124,7 @@ export async function evaluateDesign(
     spectra: evaluation.spectra,
     arithmetic: arithmeticResult(target.filter, evaluation.target, pairing),
     shape,
-    words: await studyWords(fit, target, runs, host.pace),
+    words: await studyWords(fit, target, document.arithmetic.rounding, runs, host.pace),
     vectors: await vectorsFrom(runs, pairing, fit, target.filter),
     findings: worstFirst(findings),
   };
@@ -159,7 +159,7 @@ async function vectorsFrom(
   target: TargetFilter,
 ): Promise<TestVectors> {
   const { take, segments } = runs[0];
-  const none = { inputs: take.inputs.map(() => 0), desired: 0 };
+  const none = noMeans(take.inputs.length);
   const read = signalReader(take, { means: none, delay: filter.delay });
   const { from, to } = segments[0];
   const raw = await read(from, Math.min(to, from + document.write.testVectors));

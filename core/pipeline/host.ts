@@ -1,9 +1,18 @@
 import type { ByteSource } from '../bytes/byteSource';
 import type { NewSha256 } from '../bytes/sha256';
+import type { FindingCode } from '../findings/sentences';
 import type { Pace } from '../pace';
 
 /** Why a file could not be opened. */
 export type OpenFailure = 'missing' | 'outside' | 'not-a-file' | 'unreadable';
+
+/** The finding about a recording that each is. */
+export const failureCodes = {
+  missing: 'missing-file',
+  outside: 'outside-root',
+  'not-a-file': 'not-a-file',
+  unreadable: 'unreadable-file',
+} as const satisfies Record<OpenFailure, FindingCode>;
 
 /** What the core needs of the place it runs in. */
 export interface Host {

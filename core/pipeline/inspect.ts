@@ -5,7 +5,7 @@ import { channelLabel } from '../recordings/recording';
 import { surveyRecording } from '../suitability/recording/surveyRecording';
 import { checkPair, checkSilence } from './checkPair';
 import type { RecordingSummary } from './designResult';
-import type { Host } from './host';
+import { failureCodes, type Host } from './host';
 import { inspectPair, type PairInspection } from './inspectPair';
 import { type DocumentPlace, readPairing } from './pairing';
 import { recordingSummaries } from './summaries';
@@ -29,13 +29,7 @@ export interface InspectedPairing {
 export async function inspectRecording(host: Host, path: string, file: string): Promise<InspectedRecording> {
   const source = await host.open(path);
   if (typeof source === 'string') {
-    const codes = {
-      missing: 'missing-file',
-      outside: 'outside-root',
-      'not-a-file': 'not-a-file',
-      unreadable: 'unreadable-file',
-    } as const;
-    return { recording: null, findings: [finding(codes[source], {}, { file })] };
+    return { recording: null, findings: [finding(failureCodes[source], {}, { file })] };
   }
   const { recording, findings } = await openRecording(source, file, host.pace);
   if (recording === null) return { recording: null, findings: worstFirst(findings) };

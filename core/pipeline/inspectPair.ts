@@ -5,8 +5,9 @@ import { inspectChange } from '../suitability/change/inspectChange';
 import type { Band } from '../suitability/pair/bands';
 import type { CoherenceCurve } from '../suitability/pair/coherenceCurve';
 import type { Excitation } from '../suitability/pair/excitation';
-import { type AttainableFigure, inspectSpectra } from '../suitability/pair/inspectSpectra';
-import { inspectTiming, type TakeTiming } from '../suitability/timing/inspectTiming';
+import type { AttainableFigure } from '../suitability/pair/inspectSpectra';
+import type { TakeTiming } from '../suitability/timing/inspectTiming';
+import { inspectSignals } from './inspectSignals';
 import type { Pairing } from './pairing';
 
 /** What one take tells about the pair; spectral figures are null where the take has no part to take them from. */
@@ -29,22 +30,20 @@ export interface PairInspection {
 }
 
 /**
- * Inspects the fit intervals of every take: timing first, so that the spectra are laid over each other, then what changes
+ * Inspects the fit intervals of every take: timing and spectra, then what changes
  * along the recordings.
  * @param means as the fit takes them off
  * @param earlier findings that are there already, so that nothing is said twice
  * @throws Refusal `not-finite-used` where a sample is NaN or infinite
  */
 export async function inspectPair(
-  { document, takes, sampleRate }: Pairing,
+  pairing: Pairing,
   means: Means,
   earlier: readonly Finding[],
   pace: Pace,
 ): Promise<PairInspection> {
-  const { job, filter } = document;
-  const timing = await inspectTiming(takes, document, means, pace);
-  const lags = timing.takes.map(({ lagSamples }) => lagSamples ?? 0);
-  const spectra = await inspectSpectra({ takes, job, filter, sampleRate, means, lags }, pace);
+  const { document, takes } = pairing;
+  const { timing, spectra } = await inspectSignals(pairing, means, pace);
   const change = await inspectChange(takes, document, means, pace, [...earlier, ...timing.findings]);
   const { together } = spectra;
   return {

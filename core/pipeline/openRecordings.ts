@@ -7,7 +7,7 @@ import type { Levels } from '../recordings/levels';
 import { openRecording } from '../recordings/openRecording';
 import { channelLabel, type Recording } from '../recordings/recording';
 import { surveyRecording } from '../suitability/recording/surveyRecording';
-import type { Host } from './host';
+import { failureCodes, type Host } from './host';
 
 /** A recording with all that one reading of it tells. */
 export interface OpenedRecording {
@@ -91,10 +91,7 @@ async function openOne(
   const resolved = resolveInside(folder, file);
   if (resolved === null) return finding('outside-root', {}, place);
   const source = await host.open(resolved);
-  if (source === 'missing') return finding('missing-file', {}, place);
-  if (source === 'outside') return finding('outside-root', {}, place);
-  if (source === 'not-a-file') return finding('not-a-file', {}, place);
-  if (source === 'unreadable') return finding('unreadable-file', {}, place);
+  if (typeof source === 'string') return finding(failureCodes[source], {}, place);
   const opened = await openRecording(source, file, host.pace);
   const findings = opened.findings.map((found) => ({ ...found, path }));
   const { recording } = opened;

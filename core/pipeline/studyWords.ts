@@ -36,11 +36,13 @@ export interface WordStudy {
 /**
  * Compares word lengths and roundings over the measured runs, each with the most fraction bits that its word allows (the
  * chosen word with those of the document) and an accumulator wide enough.
+ * @param chosen rounding of the target
  * @returns null where the target computes in floats
  */
 export async function studyWords(
   fit: Fit,
   { filter: target, rounder }: Target,
+  chosen: Rounding,
   runs: readonly Run[],
   pace: Pace,
 ): Promise<WordStudy | null> {
@@ -61,7 +63,8 @@ export async function studyWords(
         accumulator: 64,
         accumulatorOverflow: 'wrap',
       };
-      const values = rounder(fractionBits, word, rounding);
+      const asked = word === format.word && rounding === chosen;
+      const values = asked ? target.values : rounder(fractionBits, word, rounding);
       const { bits } = worstCase(values, wide);
       if (bits > 64) continue;
       rows.push({ word, rounding, fractionBits, accumulatorBits: bits });

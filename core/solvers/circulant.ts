@@ -1,5 +1,5 @@
 import { newSpectrum } from '../statistics/blockSpectra';
-import { transformOf } from '../statistics/transform';
+import { sizeFor, transformOf } from '../statistics/transform';
 import type { Operator } from './conditionNumber';
 
 /**
@@ -11,8 +11,7 @@ import type { Operator } from './conditionNumber';
  */
 export function circulantInverse(column: Float64Array): Operator {
   const n = column.length;
-  let size = 4;
-  while (size < n) size *= 2;
+  const size = sizeFor(n);
   const transform = transformOf(size);
   const { re: eigenvalues, im } = newSpectrum(size);
   for (let k = 0; k < n; k++) {

@@ -1,3 +1,5 @@
+import { addMultiple, inner, norm } from './vectors';
+
 /** A linear map on vectors of one size. */
 export type Operator = (vector: Float64Array) => Float64Array;
 
@@ -24,14 +26,14 @@ export function largestEigenvalue(apply: Operator, size: number, settled = 0): n
   let vector = startVector(size);
   let value = 0;
   for (let j = 0; j < Math.min(steps, size); j++) {
-    scale(vector, 1 / Math.sqrt(inner(vector, vector)));
+    scale(vector, 1 / norm(vector));
     basis.push(vector);
     const next = apply(vector);
     diagonal.push(inner(vector, next));
     for (let pass = 0; pass < 2; pass++) {
-      for (const known of basis) subtractMultiple(next, known, inner(known, next));
+      for (const known of basis) addMultiple(next, known, -inner(known, next));
     }
-    const length = Math.sqrt(inner(next, next));
+    const length = norm(next);
     if (!(length > 1e-14 * diagonal[0])) break;
     if (settled > 0 && j % 4 === 3) {
       const raised = largestOfTridiagonal(diagonal, beside);
@@ -78,16 +80,6 @@ function startVector(size: number): Float64Array {
   return vector;
 }
 
-function inner(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let k = 0; k < a.length; k++) sum += a[k] * b[k];
-  return sum;
-}
-
 function scale(vector: Float64Array, factor: number): void {
   for (let k = 0; k < vector.length; k++) vector[k] *= factor;
-}
-
-function subtractMultiple(vector: Float64Array, other: Float64Array, factor: number): void {
-  for (let k = 0; k < vector.length; k++) vector[k] -= factor * other[k];
 }

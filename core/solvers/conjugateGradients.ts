@@ -1,4 +1,5 @@
 import type { Operator } from './conditionNumber';
+import { addMultiple } from './vectors';
 
 /**
  * Solves `R w = b`, R symmetric positive definite, by preconditioned conjugate gradients (Hestenes & Stiefel 1952;
@@ -46,8 +47,4 @@ function inner(a: Float64Array, b: Float64Array): number {
   }
   if (k < a.length) even += a[k] * b[k];
   return even + odd;
-}
-
-function addMultiple(vector: Float64Array, other: Float64Array, factor: number): void {
-  for (let k = 0; k < vector.length; k++) vector[k] += factor * other[k];
 }

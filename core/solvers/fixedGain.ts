@@ -1,5 +1,6 @@
 import { cosineOfTurns, sineOfTurns } from '../statistics/turns';
 import type { Fold } from './fold';
+import { inner } from './vectors';
 
 /** Linear conditions on the free taps of one input: `Σ_a columns[j][a] w[a] = values[j]`. */
 export interface GainConditions {
@@ -59,10 +60,6 @@ export function holdConditions(
 /** What the taps of the input come to under the conditions: the gain in phase and, where asked for, in quadrature. */
 export function conditionsOf({ columns }: GainConditions, taps: Float64Array): number[] {
   return columns.map((column) => inner(column, taps));
-}
-
-function inner(a: Float64Array, b: Float64Array): number {
-  return a.reduce((sum, value, i) => sum + value * b[i], 0);
 }
 
 /** One or two equations with a positive definite matrix. */

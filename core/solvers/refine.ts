@@ -1,4 +1,5 @@
 import type { Operator } from './conditionNumber';
+import { norm } from './vectors';
 
 /** A residual of this share of b or less is as small as rounding leaves it where the system is well conditioned. */
 const enough = 1e-15;
@@ -44,11 +45,4 @@ function difference(a: Float64Array, b: Float64Array): Float64Array {
 
 function sum(a: Float64Array, b: Float64Array): Float64Array {
   return a.map((value, i) => value + b[i]);
-}
-
-/** 2-norm. */
-export function norm(v: Float64Array): number {
-  let squares = 0;
-  for (let i = 0; i < v.length; i++) squares += v[i] * v[i];
-  return Math.sqrt(squares);
 }

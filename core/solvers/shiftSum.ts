@@ -1,5 +1,5 @@
 import { newSpectrum, type Spectrum } from '../statistics/blockSpectra';
-import { conjugatePlace, type Transform, transformOf } from '../statistics/transform';
+import { conjugatePlace, sizeFor, type Transform, transformOf } from '../statistics/transform';
 import type { Operator } from './conditionNumber';
 
 /** A vector of unknowns by its parts, one an input, M values each. */
@@ -24,8 +24,7 @@ export interface ShiftSum {
  * pair of columns. Error about 1e-15 times the sum of the norms of its terms.
  */
 export function shiftSumOperator({ inputs, length, toeplitz, plus, minus }: ShiftSum): Operator {
-  let size = 4;
-  while (size < 2 * length - 1) size *= 2;
+  const size = sizeFor(2 * length - 1);
   const transform = transformOf(size);
   const blocks = toeplitz?.map((row, r) =>
     row.map((column, s) => circulant(column, toeplitz[s][r], transform)),

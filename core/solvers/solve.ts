@@ -2,7 +2,8 @@ import type { CholeskyFactor } from './cholesky';
 import { largestEigenvalue } from './conditionNumber';
 import type { NormalSystem } from './normalSystem';
 import { type Method, methodFor, prepare } from './prepare';
-import { norm, refine } from './refine';
+import { refine } from './refine';
+import { norm } from './vectors';
 
 export type { Method };
 

@@ -1,4 +1,4 @@
-import { type Transform, transformOf } from './transform';
+import { sizeFor, type Transform, transformOf } from './transform';
 
 /** A complex spectrum in bit-reversed order. */
 export interface Spectrum {
@@ -32,9 +32,7 @@ export interface BlockSpectra {
 
 /** The block that suits a filter of the given length: a power of two, at least 1,024 and at least the length. */
 export function blockFor(length: number): number {
-  let block = 1024;
-  while (block < length) block *= 2;
-  return block;
+  return sizeFor(length, 1024);
 }
 
 /** @param signals how many real signals each block brings */

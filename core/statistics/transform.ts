@@ -29,6 +29,13 @@ export function transformOf(size: number): Transform {
   return transform;
 }
 
+/** The smallest power of two that is no less than `least` and holds so many points. */
+export function sizeFor(points: number, least = 4): number {
+  let size = least;
+  while (size < points) size *= 2;
+  return size;
+}
+
 /** Place of the conjugate frequency of place p of a bit-reversed spectrum. */
 export function conjugatePlace(p: number): number {
   return p < 2 ? p : p ^ ((1 << (31 - Math.clz32(p))) - 1);

@@ -1,5 +1,5 @@
 import type { Interval } from '../../pair/intervals';
-import { signalReader } from '../../pair/signals';
+import { noMeans, signalReader } from '../../pair/signals';
 import type { Take } from '../../pair/take';
 import { spreadOver } from './gatherSpectra';
 
@@ -24,7 +24,7 @@ export async function converterNoise(
   stretches: readonly Interval[],
   sampleRate: number,
 ): Promise<number[]> {
-  const none = { inputs: take.inputs.map(() => 0), desired: 0 };
+  const none = noMeans(take.inputs.length);
   const read = signalReader(take, { means: none, delay: 0 });
   const rows: Float64Array[][] = take.inputs.map(() => []);
   for (const { from, to } of spreadOver(stretches, budget)) {

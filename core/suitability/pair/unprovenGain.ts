@@ -2,7 +2,7 @@ import { powerDecibels } from '../../figures/decibels';
 import { type Finding, finding } from '../../findings/finding';
 import type { Take } from '../../pair/take';
 import { channelLabel } from '../../recordings/recording';
-import { frequencyAt, transformOf } from '../../statistics/transform';
+import { frequencyAt, sizeFor, transformOf } from '../../statistics/transform';
 import { type Band, bandsInWords, inBands } from './bands';
 import type { Excitation } from './excitation';
 
@@ -52,8 +52,7 @@ export function unprovenGain(
 
 /** |W(f)|² at even steps from 0 Hz to half the sample rate, at least four to a lobe of the response. */
 function powerGains(row: Float64Array): Float64Array {
-  let size = 1024;
-  while (size < 8 * row.length) size *= 2;
+  const size = sizeFor(8 * row.length, 1024);
   const re = new Float64Array(size);
   const im = new Float64Array(size);
   re.set(row);
