@@ -28,7 +28,9 @@ describe('the house', () => {
   });
 
   it('raises nothing to a power in place where taps and integers are made, which the linter plugin cannot see', () => {
-    const exact = sources.filter((file) => file.startsWith('core/') && !/^core\/(figures|note)\//.test(file));
+    const exact = sources.filter(
+      (file) => file.startsWith('core/') && !/^core\/(figures|note|view)\//.test(file),
+    );
     expect(exact.length).toBeGreaterThan(50);
     expect(exact.filter((file) => text(file).includes('**='))).toEqual([]);
   });

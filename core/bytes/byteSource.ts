@@ -2,6 +2,8 @@
 export interface ByteSource {
   /** Size in bytes when the source was opened. */
   readonly size: number;
+  /** Changes whenever the file does; left out where that cannot be told, so that nothing read from it may be kept. */
+  readonly stamp?: string;
   /**
    * The bytes `[offset, offset + length)`, fewer only where the file ends before.
    * The array belongs to the caller until the next call of `read`, which may reuse its memory.

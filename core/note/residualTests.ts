@@ -12,13 +12,17 @@ export function residualTests(result: DesignResult): string[] {
   const over = samples < fit ? `${grouped(samples)} samples spread over the fit` : 'the samples of the fit';
   return [
     `Is anything left in the residual of the fit? Tests over ${over}; a probability is that of so much or more by chance where nothing is left.`,
-    table(
-      ['test', 'expected', 'found', 'probability'],
-      [whiteness(result), ...inputs(result)],
-      ['probability'],
-    ),
+    table(['test', 'expected', 'found', 'probability'], residualRows(result, name), ['probability']),
     remark(result),
   ];
+}
+
+/**
+ * Each test with what is expected, what was found and the probability.
+ * @param show how the name of an input is written
+ */
+export function residualRows(result: DesignResult, show: (label: string) => string): string[][] {
+  return [whiteness(result), ...inputs(result, show)];
 }
 
 function whiteness({ confidence, document }: DesignResult): string[] {
@@ -40,11 +44,11 @@ function whiteness({ confidence, document }: DesignResult): string[] {
   ];
 }
 
-function inputs(result: DesignResult): string[][] {
+function inputs(result: DesignResult, show: (label: string) => string): string[][] {
   const { residuals } = result.confidence;
   const shaped = result.shape !== null || result.document.prepare.band !== null;
   return residuals.inputs.flatMap(({ inside, fromRegularisation, bound }, r) => {
-    const label = result.inputs.length === 1 ? 'the input' : `input ${name(result.inputs[r])}`;
+    const label = result.inputs.length === 1 ? 'the input' : `input ${show(result.inputs[r])}`;
     const within = [
       `residual against ${label}, inside the filter`,
       shaped

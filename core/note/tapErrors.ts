@@ -2,7 +2,8 @@ import { mostForErrors, toldFromZero } from '../confidence/tapErrors';
 import { counted, significant } from '../figures/numbers';
 import type { DesignResult } from '../pipeline/designResult';
 
-const reasons = {
+/** Why there are no standard errors. */
+export const withheldReasons = {
   'too-many-taps': `there are more than ${mostForErrors} taps in all`,
   'too-few-samples': 'there are fewer than two samples for each tap',
   'not-invertible': 'the normal matrix could not be inverted',
@@ -14,7 +15,8 @@ export const untold = '†';
 /** What the standard errors are, or why there are none. */
 export function errorsInWords({ confidence, coefficients }: DesignResult): string {
   const { errors, window } = confidence;
-  if ('withheld' in errors) return `Standard errors of the taps are not given: ${reasons[errors.withheld]}.`;
+  if ('withheld' in errors)
+    return `Standard errors of the taps are not given: ${withheldReasons[errors.withheld]}.`;
   const taps = coefficients.flatMap((row, r) =>
     Array.from(row, (w, k) => toldFromZero(w, errors.standardErrors[r][k])),
   );

@@ -9,6 +9,7 @@ import { evaluateDesign } from './design';
 import type { DesignResult } from './designResult';
 import { type Fit, fitPair } from './fitPair';
 import type { Host } from './host';
+import { measure } from './measure';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
 import { targetFormat, targetScaling } from './targetFormat';
 import type { Target } from './toTarget';
@@ -40,10 +41,11 @@ export async function check(host: Host, text: string, place: DocumentPlace): Pro
     if (written.taps === null || stale.length > 0) {
       return { state: 'failed', result: null, findings: worstFirst([...findings, ...stale]) };
     }
-    const fit = await fitPair(read.pairing, host.pace);
+    const fit = await fitPair(read.pairing, host);
     const different = compareTaps(fit, written.taps, written.file);
     const target = writtenTarget(read.pairing, fit, written.taps);
-    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings, null);
+    const measured = await measure(read.pairing, fit, target, host);
+    const result = await evaluateDesign(host, read.pairing, place, { fit, target, measured }, findings, null);
     different.push(...compareFigures(result, written.taps, written.file));
     const failed = different.length > 0 || result.findings.some((f) => f.code === 'over-limit');
     return {

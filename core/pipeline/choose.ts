@@ -13,13 +13,13 @@ import { runsFigure } from '../evaluation/runsFigure';
 import { macsPerSample } from '../files/filterCost';
 import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
 import { say } from '../findings/say';
-import { measureMoments } from '../pair/moments';
 import { bandOf } from './askedBand';
-import { checkPair, checkSilence } from './checkPair';
 import { fitPair } from './fitPair';
-import type { Host } from './host';
+import type { Host, Work } from './host';
 import { inspectSignals } from './inspectSignals';
+import { momentsOf } from './momentsOf';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
+import { momentsKey } from './stageKeys';
 
 /** What a search over length, delay and regularisation found. */
 export interface Choice {
@@ -68,19 +68,20 @@ export async function choose(
 
 async function chooseFor(
   pairing: Pairing,
-  { pace }: Host,
+  work: Work,
   findings: Finding[],
   onCurves?: (soFar: SearchResult) => void,
 ): Promise<Choice> {
   const { document, takes } = pairing;
-  refuseIfAny(checkPair(pairing));
-  const moments = await measureMoments(takes, document.prepare.removeMean, pace);
-  refuseIfAny(checkSilence(takes, moments));
+  const { pace, keep } = work;
+  const moments = await momentsOf(pairing, work);
   const band = bandOf(pairing);
   const plan = planSearch(takes, document.job, document.filter, desiredIsInput(pairing), band?.history);
   if ('refused' in plan) throw new Refusal([plan.refused]);
   const { grid, layout, folds } = plan;
-  const statistics = await gatherStatistics(takes, folds, layout, moments, pace, band);
+  const statistics = await keep('blocks', [momentsKey(pairing), document.prepare, layout, folds], () =>
+    gatherStatistics(takes, folds, layout, moments, pace, band),
+  );
   const found = await search(statistics, layout, grid, {
     first: grid.regularisations.indexOf(document.filter.regularisation),
     pace,
@@ -102,17 +103,13 @@ async function chooseFor(
     folds,
     suggestion,
     reason: suggestionText(suggestion, folds.blocks, macs),
-    heldOut: await heldOutOf(pairing, suggestion, pace, findings),
+    heldOut: await heldOutOf(pairing, suggestion, work, findings),
     opinions: secondOpinions(found, kept),
     attainableDb:
       band === null
-        ? (await inspectSignals(pairing, moments.means, pace)).spectra.together.attainableDb
+        ? (await inspectSignals(pairing, moments.means, work)).spectra.together.attainableDb
         : null,
   };
-}
-
-function refuseIfAny(findings: Finding[]): void {
-  if (findings.length > 0) throw new Refusal(findings);
 }
 
 function desiredIsInput({ takes, recordings }: Pairing): boolean {
@@ -129,16 +126,16 @@ function desiredIsInput({ takes, recordings }: Pairing): boolean {
 async function heldOutOf(
   pairing: Pairing,
   { chosen }: Suggestion,
-  pace: Host['pace'],
+  work: Work,
   findings: Finding[],
 ): Promise<ErrorFigure | null> {
   const { document, takes } = pairing;
   const { length, delay, regularisation } = chosen;
   const filter = { ...document.filter, length, delay, regularisation };
   try {
-    const fit = await fitPair({ ...pairing, document: { ...document, filter } }, pace);
+    const fit = await fitPair({ ...pairing, document: { ...document, filter } }, work);
     const { runs } = heldOutRuns(takes, document.job, fit.filter);
-    if (runs.length > 0) return await runsFigure(runs, fit.filter, pace);
+    if (runs.length > 0) return await runsFigure(runs, fit.filter, work.pace);
     findings.push(finding('no-held-out', {}, { path: ['takes', 0] }));
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;

@@ -1,9 +1,7 @@
 import { residualFindings } from '../confidence/residualFindings';
 import { bandFigures } from '../evaluation/bandFigures';
-import { fitFigure } from '../evaluation/fitFigure';
-import { evaluate } from '../evaluation/heldOutFigures';
 import { checkLimits } from '../evaluation/limits';
-import { heldOutRuns, type MeasuredRuns, runsOver } from '../evaluation/measuredRuns';
+import type { MeasuredRuns } from '../evaluation/measuredRuns';
 import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
 import { overflowFindings } from '../numbers/overflowFindings';
 import { type TargetFilter, targetInput } from '../numbers/targetFilter';
@@ -16,8 +14,10 @@ import type { DesignResult } from './designResult';
 import { type Fit, fitPair } from './fitPair';
 import type { Host } from './host';
 import { inspectPair, type PairInspection } from './inspectPair';
-import { type DocumentPlace, type Pairing, readPairing } from './pairing';
+import { type Measured, measure } from './measure';
+import { type DocumentPlace, type Pairing, type ReadPairing, readPairing } from './pairing';
 import { gainFindings, shapeResult } from './shapeResult';
+import { fitKey, measureKey } from './stageKeys';
 import { studyWords } from './studyWords';
 import { recordingSummaries, takeSummaries } from './summaries';
 import { type Target, toTarget } from './toTarget';
@@ -28,6 +28,20 @@ export interface Designed {
   findings: Finding[];
 }
 
+/** Told as the stages come, for those who show them one by one. */
+export interface DesignWatch {
+  read?(read: ReadPairing): void;
+  measured?(pairing: Pairing, fit: Fit, measured: Measured): void;
+  inspected?(inspection: PairInspection): void;
+}
+
+/** A solution in doubles, in the target's numbers, and what both are worth. */
+export interface Solved {
+  fit: Fit;
+  target: Target;
+  measured: Measured;
+}
+
 /** Condition number from which the taps are called ill-conditioned: they keep about six digits (common practice). */
 const illConditioned = 1e10;
 
@@ -35,16 +49,33 @@ const illConditioned = 1e10;
  * The whole job on one document: read, pair, statistics, solution, evaluation, number format.
  * Bad input never throws: it comes back as findings, with `result` null where one of them is a blocker.
  */
-export async function design(host: Host, text: string, place: DocumentPlace): Promise<Designed> {
+export async function design(
+  host: Host,
+  text: string,
+  place: DocumentPlace,
+  watch: DesignWatch = {},
+): Promise<Designed> {
   const findings: Finding[] = [];
   try {
     const read = await readPairing(host, text, place);
     findings.push(...read.findings);
+    watch.read?.(read);
     if (read.pairing === null) return { result: null, findings: worstFirst(findings) };
-    const fit = await fitPair(read.pairing, host.pace);
-    const target = toTarget(read.pairing, fit);
-    const inspection = await inspectPair(read.pairing, fit.moments.means, findings, host.pace);
-    const result = await evaluateDesign(host, read.pairing, place, fit, target, findings, inspection);
+    const { pairing } = read;
+    const fit = await fitPair(pairing, host);
+    const target = await toTarget(pairing, fit, host);
+    const measured = await measure(pairing, fit, target, host);
+    watch.measured?.(pairing, fit, measured);
+    const inspection = await inspectPair(pairing, fit.moments.means, findings, host);
+    watch.inspected?.(inspection);
+    const result = await evaluateDesign(
+      host,
+      pairing,
+      place,
+      { fit, target, measured },
+      findings,
+      inspection,
+    );
     return { result, findings: result.findings };
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
@@ -60,20 +91,17 @@ export async function evaluateDesign(
   host: Host,
   pairing: Pairing,
   place: DocumentPlace,
-  fit: Fit,
-  target: Target,
+  { fit, target, measured }: Solved,
   earlier: readonly Finding[],
   inspection: PairInspection | null,
 ): Promise<DesignResult> {
   const { document, takes, sampleRate } = pairing;
   const { filter } = fit;
-  const fitted = fit.figure ?? (await fitFigure(takes, document.filter.windowing, filter, host.pace));
-  const heldOut = heldOutRuns(takes, document.job, filter);
-  const proved = heldOut.runs.length > 0;
-  const runs = proved ? heldOut.runs : runsOver(takes, (take) => take.fit, filter);
-  const evaluation = await evaluate(runs, filter, target.filter, sampleRate, host.pace);
+  const { heldOut, proved, runs, evaluation } = measured;
   const shape = await shapeResult(pairing, fit, target.filter, runs, evaluation.total.nmseDb, host.pace);
-  const confidence = await confidenceOf(pairing, fit, host.pace);
+  const confidence = await host.keep('confidence', fitKey(pairing), () =>
+    confidenceOf(pairing, fit, host.pace),
+  );
   const summaries = takeSummaries(takes);
   const inputs = summaries[0].inputs.map(({ channel }) => channel);
   const trustworthy = document.job !== 'cancel' || heldOut.disturbanceOnly;
@@ -109,7 +137,7 @@ export async function evaluateDesign(
     inputPowers: fit.moments.inputPowers,
     method: fit.solution.method,
     conditionNumber: fit.solution.conditionNumber,
-    fit: fitted,
+    fit: measured.fit,
     confidence,
     inspection,
     heldOut: proved
@@ -124,7 +152,9 @@ export async function evaluateDesign(
     spectra: evaluation.spectra,
     arithmetic: arithmeticResult(target.filter, evaluation.target, pairing),
     shape,
-    words: await studyWords(fit, target, document.arithmetic.rounding, runs, host.pace),
+    words: await host.keep('words', measureKey(pairing), () =>
+      studyWords(fit, target, document.arithmetic.rounding, runs, host.pace),
+    ),
     vectors: await vectorsFrom(runs, pairing, fit, target.filter),
     findings: worstFirst(findings),
   };

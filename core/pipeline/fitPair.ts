@@ -1,8 +1,7 @@
 import type { Filter } from '../evaluation/filter';
 import { type ErrorFigure, fitFigureFromSums } from '../evaluation/fitFigure';
 import { finding, Refusal } from '../findings/finding';
-import type { Pace } from '../pace';
-import { type Moments, measureMoments } from '../pair/moments';
+import type { Moments } from '../pair/moments';
 import { type GainConditions, gainConditions, holdConditions } from '../solvers/fixedGain';
 import { type Fold, foldSystem, newFold, unfold } from '../solvers/fold';
 import { type NormalSystem, normalSystem } from '../solvers/normalSystem';
@@ -10,8 +9,10 @@ import { quadraticForm } from '../solvers/quadraticForm';
 import { type Solution, solve, type Unsolvable } from '../solvers/solve';
 import { gatherSums } from '../statistics/gatherSums';
 import { bandOf } from './askedBand';
-import { checkPair, checkSilence } from './checkPair';
+import type { Work } from './host';
+import { momentsOf } from './momentsOf';
 import type { Pairing } from './pairing';
+import { fitKey, sumsKey } from './stageKeys';
 
 /** The minimum-mean-squared-error filter of a pairing and what led to it. */
 export interface Fit {
@@ -35,14 +36,18 @@ export interface Fit {
  * Statistics and solution.
  * @throws Refusal where a blocker is found
  */
-export async function fitPair(pairing: Pairing, pace: Pace): Promise<Fit> {
+export async function fitPair(pairing: Pairing, work: Work): Promise<Fit> {
+  const moments = await momentsOf(pairing, work);
+  return work.keep('fit', fitKey(pairing), () => solvePair(pairing, moments, work));
+}
+
+async function solvePair(pairing: Pairing, moments: Moments, { pace, keep }: Work): Promise<Fit> {
   const { document, takes } = pairing;
   const { length, delay, windowing, regularisation } = document.filter;
-  refuseIfAny(checkPair(pairing));
-  const moments = await measureMoments(takes, document.prepare.removeMean, pace);
-  refuseIfAny(checkSilence(takes, moments));
   const band = bandOf(pairing);
-  const sums = await gatherSums(takes, { length, delay, windowing, band }, moments.means, pace);
+  const sums = await keep('sums', sumsKey(pairing), () =>
+    gatherSums(takes, { length, delay, windowing, band }, moments.means, pace),
+  );
   const whole = normalSystem(sums, moments.inputPowers);
   const fold = newFold(length, document.filter.symmetry);
   const system = foldSystem(whole, sums.inputs, fold);
@@ -101,10 +106,6 @@ function held(
     if ('smallestRegularisation' in solved) throw new Error('a system was solved once and not a second time');
     return solved.coefficients;
   });
-}
-
-function refuseIfAny(findings: Refusal['findings']): void {
-  if (findings.length > 0) throw new Refusal(findings);
 }
 
 function unsolvable({ order, conditionNumber, smallestRegularisation }: Unsolvable, regularisation: number) {

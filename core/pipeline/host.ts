@@ -2,6 +2,7 @@ import type { ByteSource } from '../bytes/byteSource';
 import type { NewSha256 } from '../bytes/sha256';
 import type { FindingCode } from '../findings/sentences';
 import type { Pace } from '../pace';
+import type { Keep } from './keep';
 
 /** Why a file could not be opened. */
 export type OpenFailure = 'missing' | 'outside' | 'not-a-file' | 'unreadable';
@@ -20,4 +21,8 @@ export interface Host {
   open(path: string): Promise<ByteSource | OpenFailure>;
   newSha256: NewSha256;
   pace: Pace;
+  keep: Keep;
 }
+
+/** What the stages that compute need of it. */
+export type Work = Pick<Host, 'pace' | 'keep'>;

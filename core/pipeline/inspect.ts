@@ -1,12 +1,11 @@
-import { blocked, type Finding, finding, Refusal, worstFirst } from '../findings/finding';
-import { measureMoments } from '../pair/moments';
+import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
 import { openRecording } from '../recordings/openRecording';
 import { channelLabel } from '../recordings/recording';
 import { surveyRecording } from '../suitability/recording/surveyRecording';
-import { checkPair, checkSilence } from './checkPair';
 import type { RecordingSummary } from './designResult';
 import { failureCodes, type Host } from './host';
 import { inspectPair, type PairInspection } from './inspectPair';
+import { momentsOf } from './momentsOf';
 import { type DocumentPlace, readPairing } from './pairing';
 import { recordingSummaries } from './summaries';
 
@@ -57,12 +56,8 @@ export async function inspectPairing(
   if (pairing === null) return { recordings: [], pair: null, findings: worstFirst(findings) };
   const recordings = recordingSummaries(pairing);
   try {
-    const { takes, document } = pairing;
-    const blockers = checkPair(pairing);
-    const moments = await measureMoments(takes, document.prepare.removeMean, host.pace);
-    blockers.push(...checkSilence(takes, moments));
-    if (blocked(blockers)) throw new Refusal(blockers);
-    const pair = await inspectPair(pairing, moments.means, findings, host.pace);
+    const { means } = await momentsOf(pairing, host);
+    const pair = await inspectPair(pairing, means, findings, host);
     return { recordings, pair, findings: worstFirst([...findings, ...pair.findings]) };
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;

@@ -1,3 +1,4 @@
+import type { ByteSource } from '../bytes/byteSource';
 import { digestSource } from '../bytes/digest';
 import type { PairingDocument, TrackEntry } from '../document/pairingDocument';
 import { resolveInside } from '../document/paths';
@@ -5,8 +6,9 @@ import { blocked, type Finding, finding } from '../findings/finding';
 import { findChannel } from '../recordings/findChannel';
 import type { Levels } from '../recordings/levels';
 import { openRecording } from '../recordings/openRecording';
-import { channelLabel, type Recording } from '../recordings/recording';
-import { surveyRecording } from '../suitability/recording/surveyRecording';
+import type { Outline } from '../recordings/outline';
+import { channelLabel, type Opened, type Recording } from '../recordings/recording';
+import { type Survey, surveyRecording } from '../suitability/recording/surveyRecording';
 import { failureCodes, type Host } from './host';
 
 /** A recording with all that one reading of it tells. */
@@ -15,6 +17,7 @@ export interface OpenedRecording {
   sha256: string;
   /** One entry a channel. */
   levels: Levels[];
+  outlines: Outline[];
 }
 
 /** Opens the files that a document names, each once. */
@@ -72,12 +75,7 @@ function mentionsIn({ takes }: PairingDocument): Map<string, Mention[]> {
   return files;
 }
 
-interface OpenedOne {
-  recording: Recording | null;
-  sha256: string;
-  levels: Levels[];
-  findings: Finding[];
-}
+type OpenedOne = Omit<OpenedRecording, 'recording'> & Opened;
 
 async function openOne(
   host: Host,
@@ -92,32 +90,50 @@ async function openOne(
   if (resolved === null) return finding('outside-root', {}, place);
   const source = await host.open(resolved);
   if (typeof source === 'string') return finding(failureCodes[source], {}, place);
-  const opened = await openRecording(source, file, host.pace);
-  const findings = opened.findings.map((found) => ({ ...found, path }));
-  const { recording } = opened;
-  if (recording === null || blocked(findings)) return { recording: null, sha256: '', levels: [], findings };
-  const sha256 = await digestSource(source, host.newSha256, recording.lineEndsIgnored, host.pace);
-  const survey = await surveyMentioned(host, recording, mentions, document);
-  return { recording, sha256, levels: survey.levels, findings: [...findings, ...survey.findings] };
+  const { recording, sha256, findings: found } = await openFile(host, source, resolved, file);
+  const findings = found.map((one) => ({ ...one, path }));
+  if (recording === null) return { recording, sha256, levels: [], outlines: [], findings };
+  const keptBy = source.stamp === undefined ? null : [resolved, source.stamp];
+  const survey = await surveyMentioned(host, recording, keptBy, mentions, document);
+  return { recording, sha256, ...survey, findings: [...findings, ...survey.findings] };
+}
+
+/** Reads a file's header and its digest, once while its stamp stands. */
+function openFile(
+  { pace, newSha256, keep }: Host,
+  source: ByteSource,
+  path: string,
+  file: string,
+): Promise<Opened & { sha256: string }> {
+  const open = async () => {
+    const { recording, findings } = await openRecording(source, file, pace);
+    if (recording === null || blocked(findings)) return { recording: null, findings, sha256: '' };
+    const sha256 = await digestSource(source, newSha256, recording.lineEndsIgnored, pace);
+    return { recording, findings, sha256 };
+  };
+  return source.stamp === undefined ? open() : keep('opened', [path, file, source.stamp], open);
 }
 
 /** Surveys the channels that are named. Where the document has means taken off, an offset is dealt with. */
 async function surveyMentioned(
-  host: Host,
+  { pace, keep }: Host,
   recording: Recording,
+  keptBy: unknown,
   mentions: readonly Mention[],
   { sampleRate, prepare }: PairingDocument,
-): Promise<{ levels: Levels[]; findings: Finding[] }> {
+): Promise<Survey> {
   const paths = new Map<number, Path>();
   for (const { channel, path } of mentions) {
     const number = findChannel(recording, channel);
     if (number !== null && !paths.has(number)) paths.set(number, [...path, 'channel']);
   }
   const channels = [...paths.keys()].sort((a, b) => a - b);
-  const { levels, findings } = await surveyRecording(recording, { channels, sampleRate }, host.pace);
+  const survey = () => surveyRecording(recording, { channels, sampleRate }, pace);
+  const key = [keptBy, channels, sampleRate];
+  const { findings, ...measured } = await (keptBy === null ? survey() : keep('survey', key, survey));
   const labels = new Map([...paths].map(([number, path]) => [channelLabel(recording, number), path]));
   return {
-    levels,
+    ...measured,
     findings: findings
       .filter(({ code }) => code !== 'offset' || !prepare.removeMean)
       .map((found) => ({ ...found, path: labels.get(found.channel ?? '') ?? mentions[0].path })),

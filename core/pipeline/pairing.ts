@@ -33,23 +33,26 @@ export interface ReadPairing {
   pairing: Pairing | null;
   /** The document as far as it is valid by itself. */
   document: PairingDocument | null;
+  /** What could be opened and resolved, also where a blocker was found. */
+  recordings: Map<string, OpenedRecording>;
+  takes: Take[];
   findings: Finding[];
 }
 
 /** Reads, opens and resolves what a document names. */
 export async function readPairing(host: Host, text: string, place: DocumentPlace): Promise<ReadPairing> {
   const { document, findings } = readDocument(text);
-  if (document === null || blocked(findings)) return { pairing: null, document, findings };
+  if (document === null || blocked(findings)) {
+    return { pairing: null, document, recordings: new Map(), takes: [], findings };
+  }
   const opened = await openRecordings(host, place.folder, document);
   const recordings = new Map([...opened.byFile].map(([file, { recording }]) => [file, recording]));
   const resolved = resolveTakes(document, recordings);
   const all = [...findings, ...opened.findings, ...resolved.findings];
-  if (blocked(all)) return { pairing: null, document, findings: all };
-  const documentSha256 = sha256OfText(host.newSha256, documentMeaning(document));
   const { takes, sampleRate } = resolved;
-  return {
-    pairing: { document, documentSha256, recordings: opened.byFile, takes, sampleRate },
-    document,
-    findings: all,
-  };
+  const read = { document, recordings: opened.byFile, takes, findings: all };
+  if (blocked(all)) return { ...read, pairing: null };
+  const documentSha256 = sha256OfText(host.newSha256, documentMeaning(document));
+  const pairing = { document, documentSha256, recordings: opened.byFile, takes, sampleRate };
+  return { ...read, pairing };
 }

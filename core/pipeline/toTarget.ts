@@ -4,8 +4,10 @@ import { isFloat, scaledCoefficients } from '../numbers/scaling';
 import type { TargetFilter } from '../numbers/targetFilter';
 import { powerOfTwo, wordRange } from '../numbers/words';
 import type { Fit } from './fitPair';
+import type { Work } from './host';
 import type { Pairing } from './pairing';
 import { type TapRounder, tapRange, tapRounder } from './roundTaps';
+import { fitKey } from './stageKeys';
 import { targetFormat, targetScaling } from './targetFormat';
 
 /** The solution in the numbers of the target, and the rounder that made them, for other words. */
@@ -19,7 +21,11 @@ export interface Target {
  * Turns the solution into the numbers of the target.
  * @throws Refusal `coefficient-too-large` where no number of fraction bits lets the coefficients fit
  */
-export function toTarget(pairing: Pairing, fit: Fit): Target {
+export async function toTarget(pairing: Pairing, fit: Fit, { keep }: Work): Promise<Target> {
+  return keep('target', [fitKey(pairing), pairing.document.arithmetic], async () => convert(pairing, fit));
+}
+
+function convert(pairing: Pairing, fit: Fit): Target {
   const { arithmetic, filter } = pairing.document;
   const scaling = targetScaling(pairing, fit.filter.means);
   const { word } = arithmetic;

@@ -1,6 +1,7 @@
 import type { Pace } from '../pace';
 import { newRunningMoments, type RunningMoments } from '../statistics/runningMoments';
 import type { Levels } from './levels';
+import { newOutline, type Outline } from './outline';
 import type { Recording } from './recording';
 
 const block = 65536;
@@ -18,10 +19,17 @@ interface Tally {
   max: number;
   whole: boolean;
   notFinite: { count: number; first: number } | null;
+  outline: Outline;
+}
+
+export interface MeasuredLevels {
+  /** One entry a channel. */
+  levels: Levels[];
+  outlines: Outline[];
 }
 
 /**
- * Levels of every channel in one pass by blocks. Mean and rms keep about 14 digits whatever the offset and the length.
+ * Levels and outlines of every channel in one pass by blocks. Mean and rms keep about 14 digits whatever the offset and the length.
  * A channel without finite samples has levels of 0.
  * @param visitors whatever else is to be done in the same pass
  */
@@ -29,10 +37,12 @@ export async function measureLevels(
   recording: Recording,
   pace: Pace,
   visitors: readonly BlockVisitor[] = [],
-): Promise<Levels[]> {
+): Promise<MeasuredLevels> {
   const channels = recording.channels.map((_, c) => c);
-  const tallies = channels.map(newTally);
-  const step = Math.min(block, Math.floor(mostSamples / channels.length));
+  const tallies = channels.map(() => newTally(recording.samples));
+  const run = tallies[0]?.outline.step ?? 1;
+  // Whole runs of the outlines, so that none is cut by the end of a block.
+  const step = Math.max(run, run * Math.floor(Math.min(block, mostSamples / channels.length) / run));
   for (let from = 0; from < recording.samples; from += step) {
     const planes = await recording.read(channels, from, Math.min(recording.samples, from + step));
     planes.forEach((samples, c) => {
@@ -41,32 +51,50 @@ export async function measureLevels(
     for (const visit of visitors) visit(planes, from);
     await pace.step('levels', from, recording.samples);
   }
-  return tallies.map(finish);
+  return { levels: tallies.map(finish), outlines: tallies.map(({ outline }) => outline) };
 }
 
-function newTally(): Tally {
+function newTally(samples: number): Tally {
   return {
     moments: newRunningMoments(),
     min: Number.POSITIVE_INFINITY,
     max: Number.NEGATIVE_INFINITY,
     whole: true,
     notFinite: null,
+    outline: newOutline(samples),
   };
 }
 
 function addBlock(tally: Tally, samples: Float64Array, from: number): void {
   tally.moments.add(samples);
-  for (let k = 0; k < samples.length; k++) {
+  const { step } = tally.outline;
+  for (let start = 0; start < samples.length; start += step) addRun(tally, samples, start, from);
+}
+
+/** One run of the outline; `start` is its place in the block that begins at sample `from`. */
+function addRun(tally: Tally, samples: Float64Array, start: number, from: number): void {
+  const { step, low, high } = tally.outline;
+  const end = Math.min(samples.length, start + step);
+  let min = Number.POSITIVE_INFINITY;
+  let max = Number.NEGATIVE_INFINITY;
+  let { whole } = tally;
+  for (let k = start; k < end; k++) {
     const value = samples[k];
     if (value - value !== 0) {
       if (tally.notFinite === null) tally.notFinite = { count: 0, first: from + k };
       tally.notFinite.count++;
       continue;
     }
-    if (value < tally.min) tally.min = value;
-    if (value > tally.max) tally.max = value;
-    if (tally.whole && Math.floor(value) !== value) tally.whole = false;
+    if (value < min) min = value;
+    if (value > max) max = value;
+    if (whole && Math.floor(value) !== value) whole = false;
   }
+  tally.whole = whole;
+  if (min < tally.min) tally.min = min;
+  if (max > tally.max) tally.max = max;
+  const run = (from + start) / step;
+  low[run] = min;
+  high[run] = max;
 }
 
 function finish({ moments, min, max, whole, notFinite }: Tally): Levels {

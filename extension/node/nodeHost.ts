@@ -4,6 +4,7 @@ import { join, sep } from 'node:path';
 import type { Sha256 } from '../../core/bytes/sha256';
 import type { Pace } from '../../core/pace';
 import type { Host } from '../../core/pipeline/host';
+import { type Keep, keepNothing } from '../../core/pipeline/keep';
 import { type OpenFile, openFile } from './fileSource';
 
 /** A host over a folder of the local disk. */
@@ -18,12 +19,16 @@ export function newSha256(): Sha256 {
   return { update: (bytes) => void hash.update(bytes), hex: () => hash.digest('hex') };
 }
 
-/** @param root absolute path of the folder that no path may leave, also not through symbolic links */
-export function newNodeHost(root: string, pace: Pace): NodeHost {
+/**
+ * @param root absolute path of the folder that no path may leave, also not through symbolic links
+ * @param keep kept stages, for hosts that do the same work again and again
+ */
+export function newNodeHost(root: string, pace: Pace, keep: Keep = keepNothing): NodeHost {
   const files: OpenFile[] = [];
   return {
     newSha256,
     pace,
+    keep,
     async open(path) {
       const whole = join(root, path);
       if (!(await staysInside(root, whole))) return 'outside';

@@ -1,12 +1,14 @@
 import { memorySource } from '../../core/bytes/byteSource';
 import { newPace } from '../../core/pace';
 import type { Host } from '../../core/pipeline/host';
+import { keepNothing } from '../../core/pipeline/keep';
 import { nodeSha256 } from './nodeSha256';
 
 /** A host whose files are in memory, by their path from the root. */
 export function memoryHost(files: Readonly<Record<string, string | Uint8Array>>): Host {
   return {
     newSha256: nodeSha256,
+    keep: keepNothing,
     pace: newPace(),
     async open(path) {
       if (!Object.hasOwn(files, path)) return 'missing';

@@ -14,23 +14,30 @@ const ofJob = {
 } as const;
 
 /** What the reviewer and the user of the filter have to bear in mind. */
-export function cautions({ document, sampleRate }: DesignResult): string {
+export function cautions(result: DesignResult): string {
+  return section(
+    'Cautions',
+    bullets([
+      ...cautionTexts(result),
+      `These files are generated. Change the pairing document and run ${code('tapwright design')} again rather than edit them.`,
+    ]),
+  );
+}
+
+/** The cautions that hold for the filter wherever it is used. */
+export function cautionTexts({ document, sampleRate }: DesignResult): string[] {
   const { delay } = document.filter;
   const late =
     delay > 0 && document.job !== 'identify'
       ? `, here ${samplesAndTime(delay, sampleRate)} by the design's own delay,`
       : '';
-  return section(
-    'Cautions',
-    bullets([
-      'The filter holds for the conditions recorded: the same sensors, mounting, gains, sample rate and operating range. Where they change, record and design again.',
-      ofJob[document.job],
-      `In a control loop a filter adds delay${late} and can make the loop unstable: the loop has to be analysed with it.`,
-      ...(document.job === 'cancel'
-        ? []
-        : ['An output that drives an actuator or a loudspeaker can be loud or large: limit it.']),
-      'Nothing here qualifies the filter for a safety function, a medical device or a hearing device: the applicable standards, local codes and a licensed engineer decide.',
-      `These files are generated. Change the pairing document and run ${code('tapwright design')} again rather than edit them.`,
-    ]),
-  );
+  return [
+    'The filter holds for the conditions recorded: the same sensors, mounting, gains, sample rate and operating range. Where they change, record and design again.',
+    ofJob[document.job],
+    `In a control loop a filter adds delay${late} and can make the loop unstable: the loop has to be analysed with it.`,
+    ...(document.job === 'cancel'
+      ? []
+      : ['An output that drives an actuator or a loudspeaker can be loud or large: limit it.']),
+    'Nothing here qualifies the filter for a safety function, a medical device or a hearing device: the applicable standards, local codes and a licensed engineer decide.',
+  ];
 }

@@ -60,7 +60,8 @@ function delay({ document, sampleRate }: DesignResult): string {
     : `**Delay ${samples}.** A pure lag of ${time} is kept out of the filter: the input is delayed before it.`;
 }
 
-const solvers = {
+/** How the system was solved. */
+export const solverWords = {
   levinson: 'the Levinson recursion',
   gradients: 'preconditioned conjugate gradients',
   schur: 'the generalised Schur algorithm',
@@ -77,7 +78,7 @@ function regularisation({ document, conditionNumber, method }: DesignResult): st
   const left = Number.isFinite(conditionNumber)
     ? `Of the 16 digits of the arithmetic about ${Math.floor(digits)} are left in the coefficients.`
     : 'The coefficients are not determined by the data.';
-  const solver = solvers[method];
+  const solver = solverWords[method];
   return `**Regularisation ${value}.** Condition number of the regularised normal matrix ${significant(conditionNumber, 2)}, solved by ${solver}. ${left}`;
 }
 

@@ -13,12 +13,20 @@ import { wordStudy } from '../wordStudy';
 export function numberFormat(result: DesignResult): string {
   return section(
     'Number format and loss',
-    table(['what', 'value'], [...coefficients(result), ...accumulator(result), ...wordsOfSignals(result)]),
+    table(['what', 'value'], formatRows(result, name)),
     lossIntroduction(result),
     table(['what', 'value'], loss(result), ['value']),
     ...wordStudy(result),
     wantedSignalReminder(result),
   );
+}
+
+/**
+ * Words, ranges and room against overflow, as label and value.
+ * @param show how the name of a signal is written
+ */
+export function formatRows(result: DesignResult, show: (label: string) => string): string[][] {
+  return [...coefficients(result), ...accumulator(result), ...wordsOfSignals(result, show)];
 }
 
 function coefficients({ document, arithmetic }: DesignResult): string[][] {
@@ -66,7 +74,10 @@ function accumulator({ document, arithmetic }: DesignResult): string[][] {
   ];
 }
 
-function wordsOfSignals({ document, arithmetic, inputs, desired }: DesignResult): string[][] {
+function wordsOfSignals(
+  { document, arithmetic, inputs, desired }: DesignResult,
+  show: (label: string) => string,
+): string[][] {
   const { input, output } = signalWords(document);
   const signal = (word: Word, fullScale: number, count: number) =>
     typeof word === 'number'
@@ -74,11 +85,11 @@ function wordsOfSignals({ document, arithmetic, inputs, desired }: DesignResult)
       : word;
   return [
     ...inputs.map((label, r) => [
-      `input ${name(label)}`,
+      `input ${show(label)}`,
       signal(input, arithmetic.inputFullScale[r], arithmetic.inputCount[r]),
     ]),
     [
-      `output, in the unit of ${name(desired)}`,
+      `output, in the unit of ${show(desired)}`,
       signal(output, arithmetic.outputFullScale, arithmetic.outputCount),
     ],
   ];

@@ -2,6 +2,7 @@ import { type Finding, worstFirst } from '../../findings/finding';
 import type { Pace } from '../../pace';
 import type { Levels } from '../../recordings/levels';
 import { measureLevels } from '../../recordings/measureLevels';
+import type { Outline } from '../../recordings/outline';
 import { channelLabel, type Recording } from '../../recordings/recording';
 import type { ChannelCheck, ChannelFacts, RecordingCheck } from './check';
 import { newFlatness } from './flatness';
@@ -15,6 +16,7 @@ import { newResolution } from './resolution';
 export interface Survey {
   /** One entry a channel. */
   levels: Levels[];
+  outlines: Outline[];
   /** Worst first. */
   findings: Finding[];
 }
@@ -48,7 +50,7 @@ export async function surveyRecording(
     });
     for (const check of together) check.add(looked, from);
   };
-  const levels = await measureLevels(recording, pace, channels.length === 0 ? [] : [visit]);
+  const { levels, outlines } = await measureLevels(recording, pace, channels.length === 0 ? [] : [visit]);
   const facts = channels.map((channel) => factsOf(recording, channel, levels[channel], rate));
   const findings = [
     ...facts.flatMap((of, c) => [
@@ -58,7 +60,7 @@ export async function surveyRecording(
     ]),
     ...together.flatMap((check) => check.findings(facts)),
   ];
-  return { levels, findings: worstFirst(findings) };
+  return { levels, outlines, findings: worstFirst(findings) };
 }
 
 /** In the order in which they see a block: the resolution is known to the others. */

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { memorySource } from '../../../../core/bytes/byteSource';
 import type { Finding } from '../../../../core/findings/finding';
 import { inspectPairing, inspectRecording } from '../../../../core/pipeline/inspect';
+import { keepNothing } from '../../../../core/pipeline/keep';
 import { nodeSha256 } from '../../../support/nodeSha256';
 import { normals } from '../../../support/random';
 import { pace } from '../../../support/takes';
@@ -25,6 +26,7 @@ function hostOf(files: Record<string, string>) {
     open: async (path: string) =>
       files[path] === undefined ? ('missing' as const) : memorySource(new TextEncoder().encode(files[path])),
     newSha256: nodeSha256,
+    keep: keepNothing,
     pace,
   };
 }

@@ -1,0 +1,59 @@
+import type { Interval } from '../pair/intervals';
+import type { Track } from '../pair/take';
+import type { Pairing } from './pairing';
+
+/** What the stages depend on, as keys for {@link import('./keep').Keep}: digests instead of samples. */
+
+/** The signals of every take and the rate. */
+function signals({ takes, recordings, sampleRate }: Pairing): unknown {
+  const track = ({ recording, channel }: Track) => [
+    recording.file,
+    recordings.get(recording.file)?.sha256,
+    channel,
+  ];
+  return [sampleRate, takes.map(({ name, inputs, desired }) => [name, inputs.map(track), track(desired)])];
+}
+
+/** The means and powers. */
+export function momentsKey(pairing: Pairing): unknown {
+  return [signals(pairing), intervalsOf(pairing, 'fit'), pairing.document.prepare.removeMean];
+}
+
+/** The sums of the normal equations. */
+export function sumsKey(pairing: Pairing): unknown {
+  const { length, delay, windowing } = pairing.document.filter;
+  return [momentsKey(pairing), pairing.document.prepare.band, length, delay, windowing];
+}
+
+/** The solution. */
+export function fitKey(pairing: Pairing): unknown {
+  return [momentsKey(pairing), pairing.document.prepare, pairing.document.filter];
+}
+
+/** The figures of the solution over the held-out data, in doubles and in the numbers of the target. */
+export function measureKey(pairing: Pairing): unknown {
+  const { job, arithmetic } = pairing.document;
+  return [
+    fitKey(pairing),
+    arithmetic,
+    job,
+    intervalsOf(pairing, 'heldOut'),
+    intervalsOf(pairing, 'disturbanceOnly'),
+  ];
+}
+
+/** The inspection of the pair. */
+export function inspectionKey(pairing: Pairing): unknown {
+  const { job, takes } = pairing.document;
+  return [
+    fitKey(pairing),
+    job,
+    takes,
+    intervalsOf(pairing, 'heldOut'),
+    intervalsOf(pairing, 'disturbanceOnly'),
+  ];
+}
+
+function intervalsOf({ takes }: Pairing, key: 'fit' | 'heldOut' | 'disturbanceOnly'): Interval[][] {
+  return takes.map((take) => take[key]);
+}
