@@ -22,10 +22,12 @@ const turn = 30;
  * A pace that yields to the event loop every 30 ms.
  * @param stopped asked once a step
  * @param report called with every step
+ * @param between awaited with every turn: work of others that cannot wait for the end
  */
 export function newPace(
   stopped: () => boolean = () => false,
   report: (what: string, done: number, total: number) => void = () => {},
+  between: () => Promise<void> = async () => {},
 ): Pace {
   let last = performance.now();
   return {
@@ -33,6 +35,7 @@ export function newPace(
       report(what, done, total);
       if (performance.now() - last >= turn) {
         await new Promise<void>((resolve) => setTimeout(resolve, 0));
+        await between();
         last = performance.now();
       }
       if (stopped()) throw new Stopped();

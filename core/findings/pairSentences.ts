@@ -18,6 +18,10 @@ export const pairSentences = table({
     severity: 'blocker',
     says: 'the file is there but cannot be read; check its permissions.',
   },
+  'file-too-large': {
+    severity: 'blocker',
+    says: 'the file is larger than 64 MiB, and files are read whole here. Use the desktop, or the command line, which read any size by parts; or cut the recording.',
+  },
   'rate-differs': {
     severity: 'blocker',
     says: 'got {rate} samples a second when expected {expected}, the rate of {other}. Record with one clock or bring the files to one rate first.',

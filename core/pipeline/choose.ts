@@ -51,7 +51,7 @@ export async function choose(
   host: Host,
   text: string,
   place: DocumentPlace,
-  onCurves?: (soFar: SearchResult) => void,
+  onCurves?: (soFar: SearchResult, pairing: Pairing) => void,
 ): Promise<Chosen> {
   const findings: Finding[] = [];
   try {
@@ -70,7 +70,7 @@ async function chooseFor(
   pairing: Pairing,
   work: Work,
   findings: Finding[],
-  onCurves?: (soFar: SearchResult) => void,
+  onCurves?: (soFar: SearchResult, pairing: Pairing) => void,
 ): Promise<Choice> {
   const { document, takes } = pairing;
   const { pace, keep } = work;
@@ -79,13 +79,16 @@ async function chooseFor(
   const plan = planSearch(takes, document.job, document.filter, desiredIsInput(pairing), band?.history);
   if ('refused' in plan) throw new Refusal([plan.refused]);
   const { grid, layout, folds } = plan;
-  const statistics = await keep('blocks', [momentsKey(pairing), document.prepare, layout, folds], () =>
-    gatherStatistics(takes, folds, layout, moments, pace, band),
-  );
-  const found = await search(statistics, layout, grid, {
-    first: grid.regularisations.indexOf(document.filter.regularisation),
-    pace,
-    ...(onCurves && { onCurves }),
+  const key = [momentsKey(pairing), document.prepare, layout, folds];
+  const found = await keep('search', [key, grid], async () => {
+    const statistics = await keep('blocks', key, () =>
+      gatherStatistics(takes, folds, layout, moments, pace, band),
+    );
+    return search(statistics, layout, grid, {
+      first: grid.regularisations.indexOf(document.filter.regularisation),
+      pace,
+      ...(onCurves && { onCurves: (soFar: SearchResult) => onCurves(soFar, pairing) }),
+    });
   });
   // The horizon of a prediction is what is wanted of it: a nearer one is easier and no better.
   const kept = document.job === 'predict' ? grid.delays.indexOf(document.filter.delay) : null;

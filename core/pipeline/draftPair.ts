@@ -4,8 +4,8 @@ import { readDocument } from '../document/readDocument';
 import { type Finding, finding, Refusal } from '../findings/finding';
 import { channelMissing, findChannelByText } from '../recordings/findChannel';
 import { openRecording } from '../recordings/openRecording';
-import { channelLabel, type Recording } from '../recordings/recording';
-import type { Host } from './host';
+import { channelEntry, channelLabel, type Recording } from '../recordings/recording';
+import { failureCodes, type Host } from './host';
 
 /** A file to be paired: its path from the root, and as the new document will name it. */
 export interface PairFile {
@@ -85,9 +85,7 @@ export async function draftPair(host: Host, request: PairRequest): Promise<Draft
 async function openOne(host: Host, { path, file }: PairFile, findings: Finding[]): Promise<Recording> {
   const source = await host.open(path);
   if (typeof source === 'string') {
-    const code =
-      source === 'missing' ? 'missing-file' : source === 'outside' ? 'outside-root' : 'unreadable-file';
-    throw new Refusal([finding(code, {}, { file })]);
+    throw new Refusal([finding(failureCodes[source], {}, { file })]);
   }
   const opened = await openRecording(source, file, host.pace);
   if (opened.recording === null) throw new Refusal(opened.findings);
@@ -101,11 +99,8 @@ function channelOf(recording: Recording, channel: string): number {
   return number;
 }
 
-/** The name where it tells the channel apart, otherwise its number. */
 function entry(recording: Recording, file: string, channel: number): TrackEntry {
-  const name = recording.channels[channel];
-  const unique = name !== null && recording.channels.indexOf(name) === recording.channels.lastIndexOf(name);
-  return { file, channel: unique ? name : channel + 1 };
+  return { file, channel: channelEntry(recording, channel) };
 }
 
 function commonRate(input: Recording, desired: Recording, given: number | null): number | null {

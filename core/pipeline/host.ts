@@ -5,7 +5,7 @@ import type { Pace } from '../pace';
 import type { Keep } from './keep';
 
 /** Why a file could not be opened. */
-export type OpenFailure = 'missing' | 'outside' | 'not-a-file' | 'unreadable';
+export type OpenFailure = 'missing' | 'outside' | 'not-a-file' | 'unreadable' | 'too-large';
 
 /** The finding about a recording that each is. */
 export const failureCodes = {
@@ -13,6 +13,7 @@ export const failureCodes = {
   outside: 'outside-root',
   'not-a-file': 'not-a-file',
   unreadable: 'unreadable-file',
+  'too-large': 'file-too-large',
 } as const satisfies Record<OpenFailure, FindingCode>;
 
 /** What the core needs of the place it runs in. */

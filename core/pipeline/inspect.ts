@@ -6,19 +6,24 @@ import type { RecordingSummary } from './designResult';
 import { failureCodes, type Host } from './host';
 import { inspectPair, type PairInspection } from './inspectPair';
 import { momentsOf } from './momentsOf';
+import type { OpenedRecording } from './openRecordings';
 import { type DocumentPlace, readPairing } from './pairing';
-import { recordingSummaries } from './summaries';
+import { recordingSummaries, takeSummaries } from './summaries';
 
 /** What the inspection of one recording found. */
 export interface InspectedRecording {
   /** Null where a blocker was found. */
   recording: Omit<RecordingSummary, 'sha256'> | null;
+  /** The same for reading on; null likewise. */
+  opened: Omit<OpenedRecording, 'sha256'> | null;
   findings: Finding[];
 }
 
 /** What the inspection of a pairing found. */
 export interface InspectedPairing {
   recordings: RecordingSummary[];
+  /** Of the inputs, then of the desired signal; empty where a blocker was found. */
+  labels: string[];
   /** Null where a blocker was found. */
   pair: PairInspection | null;
   findings: Finding[];
@@ -28,10 +33,10 @@ export interface InspectedPairing {
 export async function inspectRecording(host: Host, path: string, file: string): Promise<InspectedRecording> {
   const source = await host.open(path);
   if (typeof source === 'string') {
-    return { recording: null, findings: [finding(failureCodes[source], {}, { file })] };
+    return { recording: null, opened: null, findings: [finding(failureCodes[source], {}, { file })] };
   }
   const { recording, findings } = await openRecording(source, file, host.pace);
-  if (recording === null) return { recording: null, findings: worstFirst(findings) };
+  if (recording === null) return { recording: null, opened: null, findings: worstFirst(findings) };
   const survey = await surveyRecording(recording, {}, host.pace);
   return {
     recording: {
@@ -42,6 +47,7 @@ export async function inspectRecording(host: Host, path: string, file: string): 
       channels: recording.channels.map((_, c) => channelLabel(recording, c)),
       levels: survey.levels,
     },
+    opened: { recording, levels: survey.levels, outlines: survey.outlines },
     findings: worstFirst([...findings, ...survey.findings]),
   };
 }
@@ -53,14 +59,16 @@ export async function inspectPairing(
   place: DocumentPlace,
 ): Promise<InspectedPairing> {
   const { pairing, findings } = await readPairing(host, text, place);
-  if (pairing === null) return { recordings: [], pair: null, findings: worstFirst(findings) };
+  if (pairing === null) return { recordings: [], labels: [], pair: null, findings: worstFirst(findings) };
   const recordings = recordingSummaries(pairing);
+  const [{ inputs, desired }] = takeSummaries(pairing.takes);
+  const labels = [...inputs, desired].map(({ channel }) => channel);
   try {
     const { means } = await momentsOf(pairing, host);
     const pair = await inspectPair(pairing, means, findings, host);
-    return { recordings, pair, findings: worstFirst([...findings, ...pair.findings]) };
+    return { recordings, labels, pair, findings: worstFirst([...findings, ...pair.findings]) };
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
-    return { recordings, pair: null, findings: worstFirst([...findings, ...error.findings]) };
+    return { recordings, labels, pair: null, findings: worstFirst([...findings, ...error.findings]) };
   }
 }

@@ -1,3 +1,4 @@
+import type { OpenFailure } from '../pipeline/host';
 import type { DocumentPlace } from '../pipeline/pairing';
 import type { Packed } from './pack';
 import type { FindingView, FormView, Part, PlannedFile } from './views';
@@ -189,4 +190,4 @@ export interface HostStat {
   stamp: string;
 }
 
-export type HostFailure = 'missing' | 'outside' | 'not-a-file' | 'unreadable' | 'too-large';
+export type HostFailure = OpenFailure;

@@ -43,3 +43,10 @@ export function unpack<T>({ json, series }: Packed): T {
     return typeof offset === 'number' ? new Float64Array(series, 8 * offset, length) : part;
   });
 }
+
+/** Whether both stand for the same value, NaN being the same as NaN. */
+export function samePacked(a: Packed, b: Packed): boolean {
+  if (a.json !== b.json || a.series.byteLength !== b.series.byteLength) return false;
+  const [left, right] = [new Uint32Array(a.series), new Uint32Array(b.series)];
+  return left.every((word, i) => word === right[i]);
+}

@@ -38,6 +38,13 @@ export interface Opened {
   findings: Finding[];
 }
 
+/** How a document names a channel: by its name where that tells it apart, otherwise by its number from 1. */
+export function channelEntry({ channels }: Recording, channel: number): string | number {
+  const name = channels[channel];
+  const unique = name !== null && channels.indexOf(name) === channels.lastIndexOf(name);
+  return unique ? name : channel + 1;
+}
+
 /** The name a channel is shown and found by: its own, or its number from 1. */
 export function channelLabel(recording: Recording, channel: number): string {
   return recording.channels[channel] ?? String(channel + 1);

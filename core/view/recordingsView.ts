@@ -6,7 +6,7 @@ import type { OpenedRecording } from '../pipeline/openRecordings';
 import type { ReadPairing } from '../pipeline/pairing';
 import type { ChannelView, FileView, RecordingsView, TakeView, TrackView } from '../protocol/views';
 import type { Levels } from '../recordings/levels';
-import { channelLabel, type Recording } from '../recordings/recording';
+import { channelEntry, channelLabel, type Recording } from '../recordings/recording';
 
 /** Files with their levels and takes with their intervals, as far as they could be read. */
 export function recordingsView({ document, pairing, recordings, takes }: ReadPairing): RecordingsView {
@@ -26,9 +26,7 @@ export function fileView(recording: Recording, levels: readonly Levels[]): FileV
 }
 
 function channelView(recording: Recording, channel: number, levels: Levels | undefined): ChannelView {
-  const own = recording.channels[channel];
-  const unique = own !== null && recording.channels.indexOf(own) === recording.channels.lastIndexOf(own);
-  const entry = { label: channelLabel(recording, channel), entry: unique ? own : channel + 1 };
+  const entry = { label: channelLabel(recording, channel), entry: channelEntry(recording, channel) };
   if (levels === undefined) {
     return { ...entry, min: null, max: null, mean: null, rms: null, peakDb: null, rmsDb: null };
   }

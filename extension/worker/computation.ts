@@ -1,0 +1,119 @@
+import { designFiles } from '../../core/files/designFiles';
+import type { Finding } from '../../core/findings/finding';
+import { worstFirst } from '../../core/findings/finding';
+import { changeAgainst } from '../../core/pipeline/changeAgainst';
+import { choose } from '../../core/pipeline/choose';
+import { design } from '../../core/pipeline/design';
+import type { DesignResult } from '../../core/pipeline/designResult';
+import type { Fit } from '../../core/pipeline/fitPair';
+import type { Host } from '../../core/pipeline/host';
+import { inspectPairing } from '../../core/pipeline/inspect';
+import type { DocumentPlace, ReadPairing } from '../../core/pipeline/pairing';
+import type { FiguresView, Part, Views } from '../../core/protocol/views';
+import { choiceView } from '../../core/view/choiceView';
+import { evidenceView } from '../../core/view/evidenceView';
+import { figuresView } from '../../core/view/figuresView';
+import { firmwareView } from '../../core/view/firmwareView';
+import { recordingsView } from '../../core/view/recordingsView';
+import { suitabilityView } from '../../core/view/suitabilityView';
+import { plannedFiles } from './plannedFiles';
+
+/** What a computation leaves behind for questions that come later. */
+export interface Computed {
+  read: ReadPairing | null;
+  fit: Fit | null;
+  result: DesignResult | null;
+}
+
+/** Where the parts go; null: cannot be had. */
+export type Send = <P extends Part>(part: P, view: Views[P] | null) => void;
+
+/** Called when work on a part begins, so that progress is shown where it belongs. */
+export type Begin = (part: Part) => void;
+
+/**
+ * Computes a pairing part by part, what a change is made for first.
+ * @param left filled in as stages are done
+ */
+export async function compute(
+  host: Host,
+  text: string,
+  place: DocumentPlace,
+  left: Computed,
+  send: Send,
+  begin: Begin,
+): Promise<void> {
+  begin('recordings');
+  let figures: FiguresView | null = null;
+  const designed = await design(host, text, place, {
+    read(read) {
+      left.read = read;
+      send('recordings', recordingsView(read));
+      begin('figures');
+    },
+    measured(pairing, fit, measured) {
+      left.fit = fit;
+      figures = figuresView(pairing, fit, measured);
+      send('figures', figures);
+      begin('suitability');
+    },
+    inspected: () => begin('evidence'),
+  });
+  const { result, findings } = designed;
+  left.result = result;
+  if (result === null || figures === null) {
+    for (const part of ['figures', 'evidence', 'firmware'] as const) send(part, null);
+    await inspectOnly(host, text, place, findings, send, begin);
+  } else {
+    const labels = [...result.inputs, result.desired];
+    const bands = result.heldOut?.bands ?? [];
+    send('suitability', suitabilityView(findings, text, result.inspection, bands, labels));
+    send('evidence', evidenceView(result, figures));
+    begin('firmware');
+    await sendFirmware(host, place, result, send);
+  }
+  begin('choice');
+  await sendChoice(host, text, place, send);
+}
+
+/** What can still be said of the pair where no design came of it. */
+async function inspectOnly(
+  host: Host,
+  text: string,
+  place: DocumentPlace,
+  earlier: readonly Finding[],
+  send: Send,
+  begin: Begin,
+): Promise<void> {
+  begin('suitability');
+  const { pair, labels } = await inspectPairing(host, text, place);
+  const findings = pair === null ? [...earlier] : worstFirst([...earlier, ...pair.findings]);
+  send('suitability', suitabilityView(findings, text, pair, [], labels));
+}
+
+async function sendFirmware(
+  host: Host,
+  place: DocumentPlace,
+  result: DesignResult,
+  send: Send,
+): Promise<void> {
+  const files = designFiles(result, host.newSha256);
+  const planned = await plannedFiles(host, place.folder, files);
+  const taps = files[files.length - 1].path;
+  const change = await changeAgainst(host, place.folder, taps, result);
+  send('firmware', firmwareView(result, files, planned, change));
+}
+
+/** Curves are sent on as they come, but not oftener than an eye can follow. */
+const betweenCurves = 150;
+
+async function sendChoice(host: Host, text: string, place: DocumentPlace, send: Send): Promise<void> {
+  let last = 0;
+  const { choice, findings } = await choose(host, text, place, (soFar, { document }) => {
+    if (performance.now() - last < betweenCurves) return;
+    last = performance.now();
+    send('choice', choiceView(soFar, document, null, [], text));
+  });
+  if (choice === null) send('choice', null);
+  else send('choice', choiceView(choice.search, choice.pairing.document, choice, findings, text));
+}
