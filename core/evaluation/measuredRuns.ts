@@ -38,6 +38,12 @@ export function heldOutRuns(takes: readonly Take[], job: Job, filter: Filter): M
   };
 }
 
+/** The same as intervals, whatever the filter. */
+export function heldOutIntervals(takes: readonly Take[], job: Job): (take: Take) => Interval[] {
+  const bare = (take: Take) => intersect(take.heldOut, take.disturbanceOnly);
+  return job === 'cancel' && takes.some((take) => bare(take).length > 0) ? bare : (take) => take.heldOut;
+}
+
 /** The usable n of some intervals of each take; takes with none are left out. */
 export function runsOver(
   takes: readonly Take[],

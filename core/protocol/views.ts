@@ -146,6 +146,8 @@ export interface FiguresView {
   taps: number;
   inputs: number;
   job: Job;
+  /** True where the figures are from sums of nearly the same samples, until the filter has been run. */
+  provisional?: boolean;
 }
 
 /** Section Evidence. */

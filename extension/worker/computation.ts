@@ -9,10 +9,12 @@ import type { Fit } from '../../core/pipeline/fitPair';
 import type { Host } from '../../core/pipeline/host';
 import { inspectPairing } from '../../core/pipeline/inspect';
 import type { DocumentPlace, ReadPairing } from '../../core/pipeline/pairing';
+import { type QuickStatistics, quickFigures } from '../../core/pipeline/quickFigures';
+import { measureKey } from '../../core/pipeline/stageKeys';
 import type { FiguresView, Part, Views } from '../../core/protocol/views';
 import { choiceView } from '../../core/view/choiceView';
 import { evidenceView } from '../../core/view/evidenceView';
-import { figuresView } from '../../core/view/figuresView';
+import { figuresView, quickView } from '../../core/view/figuresView';
 import { firmwareView } from '../../core/view/firmwareView';
 import { recordingsView } from '../../core/view/recordingsView';
 import { suitabilityView } from '../../core/view/suitabilityView';
@@ -23,10 +25,18 @@ export interface Computed {
   read: ReadPairing | null;
   fit: Fit | null;
   result: DesignResult | null;
+  /** What the last exact figures depend on. */
+  measured: string | null;
+  quick: QuickStatistics | null;
+  /** Whether figures have taken long, so that the next ones are worth being made ready for. */
+  slow: boolean;
 }
 
 /** Where the parts go; null: cannot be had. */
 export type Send = <P extends Part>(part: P, view: Views[P] | null) => void;
+
+/** Milliseconds from which a changed filter gets its figures from sums made ready before. */
+const slowFigures = 100;
 
 /** Called when work on a part begins, so that progress is shown where it belongs. */
 export type Begin = (part: Part) => void;
@@ -43,16 +53,24 @@ export async function compute(
   send: Send,
   begin: Begin,
 ): Promise<void> {
+  let began = 0;
   begin('recordings');
   let figures: FiguresView | null = null;
   const designed = await design(host, text, place, {
     read(read) {
       left.read = read;
       send('recordings', recordingsView(read));
+      began = performance.now();
+      const { pairing } = read;
+      const known = pairing !== null && left.measured === JSON.stringify(measureKey(pairing));
+      const quick = pairing === null || known ? null : quickFigures(pairing, left.quick);
+      if (pairing !== null && quick !== null) send('figures', quickView(pairing, quick));
       begin('figures');
     },
     measured(pairing, fit, measured) {
       left.fit = fit;
+      left.measured = JSON.stringify(measureKey(pairing));
+      left.slow ||= performance.now() - began > slowFigures;
       figures = figuresView(pairing, fit, measured);
       send('figures', figures);
       begin('suitability');

@@ -1,9 +1,11 @@
 import type { NewSha256 } from '../../core/bytes/sha256';
 import { designFiles } from '../../core/files/designFiles';
+import { Refusal } from '../../core/findings/finding';
 import { newPace, Stopped } from '../../core/pace';
 import type { Host } from '../../core/pipeline/host';
 import { inspectRecording } from '../../core/pipeline/inspect';
 import { newKeep } from '../../core/pipeline/keep';
+import { prepareQuick } from '../../core/pipeline/quickFigures';
 import { recordingSpectrum } from '../../core/pipeline/recordingSpectrum';
 import type { FromWorker, InspectRequest, UpdateRequest, WrittenFile } from '../../core/protocol/messages';
 import { type Packed, pack, samePacked } from '../../core/protocol/pack';
@@ -38,6 +40,8 @@ const keptEntries = 4;
 /** Fits hold matrices, sums of blocks and opened files are as many as the document has. */
 const keptByStage = { fit: 2, blocks: 1, spectra: 2, opened: 64, survey: 64 };
 
+type Report = (what: string, done: number, total: number) => void;
+
 /** Milliseconds between two reports of progress. */
 const betweenReports = 100;
 
@@ -54,7 +58,16 @@ export function newSession(
   const keep = newKeep(keptEntries, keptByStage);
   const urgent = newUrgent();
   const sent = new Map<Part, Packed>();
-  const left: SessionResults = { read: null, fit: null, result: null, recording: null, generation: 0 };
+  const left: SessionResults = {
+    read: null,
+    fit: null,
+    result: null,
+    measured: null,
+    quick: null,
+    slow: false,
+    recording: null,
+    generation: 0,
+  };
   let files: { of: string; opened: RootFiles } | null = null;
   let wanted = 0;
   let stopped = false;
@@ -68,44 +81,57 @@ export function newSession(
     return files.opened;
   };
 
-  /** Does the work once what is running has given way. */
-  const run = (
+  /** Does work once what is running has given way, as long as its generation is the wanted one. */
+  const queue = (
     { generation, root }: Pick<UpdateRequest, 'generation' | 'root'>,
+    report: Report,
+    work: (host: Host) => Promise<void>,
+  ): Promise<void> => {
+    const before = running;
+    running = (async () => {
+      await before.catch(() => {});
+      if (wanted !== generation) return;
+      const opened = await filesOf(root);
+      const pace = newPace(() => stopped || wanted !== generation, report, urgent.drain);
+      await urgent.begin();
+      try {
+        await work({ open: opened.open, newSha256, pace, keep });
+      } finally {
+        await urgent.end();
+      }
+    })();
+    return running;
+  };
+
+  /** Answers a request, with its progress and its end. */
+  const run = (
+    request: Pick<UpdateRequest, 'generation' | 'root'>,
     work: (host: Host, send: Send, begin: (part: Part) => void) => Promise<void>,
   ): Promise<void> => {
+    const { generation } = request;
     wanted = generation;
     stopped = false;
-    running = running
-      .catch(() => {})
-      .then(async () => {
-        if (wanted !== generation) return;
-        let part: Part = 'recordings';
-        let reported = 0;
-        const report = (what: string, done: number, total: number) => {
-          const now = performance.now();
-          if (now - reported < betweenReports) return;
-          reported = now;
-          tell({ type: 'busy', session, part, what, share: total > 0 ? Math.min(1, done / total) : 0 }, []);
-        };
-        const opened = await filesOf(root);
-        const pace = newPace(() => stopped || wanted !== generation, report, urgent.drain);
-        const host: Host = { open: opened.open, newSha256, pace, keep };
-        const begin = (next: Part) => {
+    let part: Part = 'recordings';
+    let reported = 0;
+    const busy = (what: string, share: number) => tell({ type: 'busy', session, part, what, share }, []);
+    const report: Report = (what, done, total) => {
+      const now = performance.now();
+      if (now - reported < betweenReports) return;
+      reported = now;
+      busy(what, total > 0 ? Math.min(1, done / total) : 0);
+    };
+    return queue(request, report, async (host) => {
+      try {
+        await work(host, sender(generation), (next) => {
           part = next;
-          tell({ type: 'busy', session, part, what: '', share: 0 }, []);
-        };
-        await urgent.begin();
-        try {
-          await work(host, sender(generation), begin);
-          tell({ type: 'idle', session, generation, stopped: false }, []);
-        } catch (error) {
-          if (!(error instanceof Stopped)) throw error;
-          if (wanted === generation) tell({ type: 'idle', session, generation, stopped: true }, []);
-        } finally {
-          await urgent.end();
-        }
-      });
-    return running;
+          busy('', 0);
+        });
+        tell({ type: 'idle', session, generation, stopped: false }, []);
+      } catch (error) {
+        if (!(error instanceof Stopped)) throw error;
+        if (wanted === generation) tell({ type: 'idle', session, generation, stopped: true }, []);
+      }
+    });
   };
 
   /** A part that is what it was before is not sent again. */
@@ -129,6 +155,12 @@ export function newSession(
       tell({ ...head, view: { json: packed.json, series: copy } }, [copy]);
     };
 
+  /** Where figures take long those of the next change are made ready for while nothing else is wanted. */
+  const makeReady = async (host: Host) => {
+    const pairing = left.read?.pairing;
+    if (pairing != null) left.quick = await prepareQuick(pairing, left.quick, host);
+  };
+
   return {
     left,
     urgent: urgent.run,
@@ -136,6 +168,7 @@ export function newSession(
       run(request, async (host, send, begin) => {
         left.generation = request.generation;
         await compute(host, request.text, request.place, left, send, begin);
+        if (left.slow) void queue(request, () => {}, makeReady).catch(ignoreStopped);
       }),
     inspect: (request) =>
       run(request, async (host, send) => {
@@ -159,4 +192,9 @@ export function newSession(
       await files?.opened.close();
     },
   };
+}
+
+/** What is made ready is given up for the next request. */
+function ignoreStopped(error: unknown): void {
+  if (!(error instanceof Stopped) && !(error instanceof Refusal)) throw error;
 }
