@@ -1,0 +1,85 @@
+import { readMark } from '../../core/files/generatedMark';
+import { type Finding, finding } from '../../core/findings/finding';
+import { type Disk, DiskError } from './disk';
+
+/** A file to be written: its path from the document's folder, with forward slashes, and its bytes. */
+export interface NewFile {
+  path: string;
+  bytes: Uint8Array;
+}
+
+export interface Written {
+  /** What became of each file, in the order given. */
+  files: { path: string; change: 'new' | 'changed' | 'unchanged' }[];
+  /** Why nothing was written; empty where all went well. */
+  findings: Finding[];
+}
+
+/**
+ * Writes all files or none: each is written whole beside its target first, then all are renamed in the order given,
+ * so that each is old or new and never between. A file that does not carry our mark is never overwritten.
+ * Where a rename fails half way the last file, which lists the digests of the others, is still the old one.
+ */
+export async function writeAll(disk: Disk, files: readonly NewFile[]): Promise<Written> {
+  const changes: Written['files'] = [];
+  const findings: Finding[] = [];
+  for (const { path, bytes } of files) {
+    const found = await compare(disk, path, bytes);
+    if (typeof found === 'string') changes.push({ path, change: found });
+    else findings.push({ ...found, file: path });
+  }
+  if (findings.length > 0) return { files: [], findings };
+
+  const waiting: { temporary: string; target: string }[] = [];
+  try {
+    for (const [i, { path, bytes }] of files.entries()) {
+      if (changes[i].change === 'unchanged') continue;
+      await disk.makeFolder(folderOf(path));
+      const temporary = disk.beside(path);
+      waiting.push({ temporary, target: path });
+      await disk.write(temporary, bytes);
+    }
+    for (const { temporary, target } of waiting) await disk.rename(temporary, target);
+  } catch (error) {
+    if (!(error instanceof DiskError)) throw error;
+    return {
+      files: [],
+      findings: [finding('not-writable', { error: error.code }, { file: error.path ?? '.' })],
+    };
+  } finally {
+    for (const { temporary } of waiting) await disk.remove(temporary);
+  }
+  return { files: changes, findings: [] };
+}
+
+async function compare(
+  disk: Disk,
+  path: string,
+  bytes: Uint8Array,
+): Promise<Written['files'][number]['change'] | Finding> {
+  try {
+    if (!(await disk.staysInside(path))) return finding('outside-root');
+    const kind = await disk.stat(path);
+    if (kind === 'missing') return 'new';
+    if (kind === 'other') return finding('foreign-file');
+    const existing = await disk.read(path);
+    if (same(existing, bytes)) return 'unchanged';
+    return readMark(startOf(existing)) === null ? finding('foreign-file') : 'changed';
+  } catch (error) {
+    if (!(error instanceof DiskError)) throw error;
+    return finding('not-writable', { error: error.code });
+  }
+}
+
+function same(a: Uint8Array, b: Uint8Array): boolean {
+  return a.length === b.length && a.every((byte, i) => byte === b[i]);
+}
+
+/** The first bytes as characters of the same number: an NPY file is no UTF-8. */
+function startOf(bytes: Uint8Array): string {
+  return Array.from(bytes.subarray(0, 4096), (byte) => String.fromCharCode(byte)).join('');
+}
+
+function folderOf(path: string): string {
+  return path.slice(0, Math.max(0, path.lastIndexOf('/')));
+}
