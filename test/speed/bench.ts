@@ -3,6 +3,7 @@ import { cpus, tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { endReference } from './python';
 import type { Row } from './row';
+import { editorRows } from './rows/editor';
 import { fileRows } from './rows/files';
 import { forgetSignals, signalRows } from './rows/signals';
 import { solverRows } from './rows/solvers';
@@ -48,7 +49,7 @@ async function main(): Promise<void> {
   console.log('| work; reference | ours, ms | reference, ms | ratio | goal | reached |');
   console.log('| --- | --: | --: | --: | --: | --- |');
   try {
-    for (const rows of [signalRows, solverRows, fileRows, stageRows]) {
+    for (const rows of [signalRows, solverRows, fileRows, stageRows, editorRows]) {
       for (const row of rows) {
         if (wanted.length > 0 && !wanted.some((word) => row.name.includes(word))) continue;
         await row.prepare(folder);
@@ -61,6 +62,8 @@ async function main(): Promise<void> {
     endReference();
     rmSync(folder, { recursive: true, force: true });
   }
+  // The editor's worker may be at work still.
+  process.exit();
 }
 
 main();

@@ -51,9 +51,11 @@ describe('link', () => {
   });
 
   it('answers a method that is not there with an error, also one of every object', async () => {
-    const { call } = joined().atFar as unknown as { call: Record<string, (value: null) => Promise<unknown>> };
+    const { call } = joined().atFar as unknown as {
+      call: Record<'missing' | 'valueOf', (value: null) => unknown>;
+    };
     await expect(call.missing(null)).rejects.toThrow('nobody answers missing');
-    await expect(call.toString(null)).rejects.toThrow('nobody answers toString');
+    await expect(call.valueOf(null)).rejects.toThrow('nobody answers valueOf');
   });
 
   it('brings notices in order', async () => {
