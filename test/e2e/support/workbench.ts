@@ -60,7 +60,7 @@ export class Workbench {
       locale: 'en-US',
     });
     // The waiting is done by `until`, which says for what.
-    context.setDefaultTimeout(5_000);
+    context.setDefaultTimeout(20_000);
     const workbench = new Workbench(server, context, await context.newPage(), files);
     try {
       await workbench.page.goto(server.address, { timeout: 60_000 });
