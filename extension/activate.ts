@@ -21,7 +21,10 @@ export function start(context: vscode.ExtensionContext, platform: Platform): voi
   );
   const services = { extensionUri: context.extensionUri, platform, worker, log, statusBar };
   const pairings = new OpenPairings(services);
-  const several = { supportsMultipleEditorsPerDocument: true };
+  const several = {
+    supportsMultipleEditorsPerDocument: true,
+    webviewOptions: { enableFindWidget: true },
+  };
   const recordings = new RecordingEditor(services);
   context.subscriptions.push(
     log,

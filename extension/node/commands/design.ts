@@ -46,15 +46,18 @@ async function designOne(document: string, given: Arguments, terminal: Terminal)
     const files = designFiles(result, host.newSha256);
     // The taps file comes last; it is compared before it is overwritten.
     const change = await changeAgainst(host, place.folder, files[files.length - 1].path, result);
+    const json = given.flag('json');
+    // Before anything is overwritten.
+    if (!json) terminal.print(designSummary(result, change));
     const written = await writeFiles(root, folder, files);
     if (blocked(written.findings)) return report(terminal, given, document, text, written.findings);
     for (const found of findings) terminal.complain(problemLine(found, document, text));
-    if (given.flag('json')) {
+    if (json) {
       const changed = change === null ? {} : { change: changeJson(change) };
       terminal.print(JSON.stringify({ ...resultJson(result), ...changed, written: written.files }, null, 2));
     } else {
       const lines = written.files.map((file) => `  ${file.change.padEnd(9)} ${file.path}`);
-      terminal.print([designSummary(result, change), ...lines].join('\n'));
+      terminal.print(lines.join('\n'));
     }
     return findings.some((found) => found.code === 'over-limit') ? exit.failed : exit.ok;
   } finally {
