@@ -2,6 +2,18 @@ import { el } from './elements';
 
 export type Cell = string | Node;
 
+/** Tables that are wider than their place scroll by themselves, by the keyboard too; others are no stop for it. */
+const widths = new ResizeObserver((entries) => {
+  for (const { target } of entries) {
+    const scrolls = target.scrollWidth > target.clientWidth;
+    const caption = target.querySelector('caption')?.textContent ?? '';
+    for (const [name, value] of Object.entries({ tabindex: '0', role: 'region', 'aria-label': caption })) {
+      if (scrolls) target.setAttribute(name, value);
+      else target.removeAttribute(name);
+    }
+  }
+});
+
 /** A table with a caption; the first cell of each row is its heading. `numeric` are the columns that are set right. */
 export function table(
   caption: string,
@@ -27,6 +39,7 @@ export function table(
     head.length > 0 && el('thead', {}, heading),
     el('tbody', {}, ...body),
   );
-  // Wide tables scroll by themselves, by the keyboard too.
-  return el('div', { class: 'wide', tabindex: '0', role: 'region', 'aria-label': caption }, grid);
+  const wide = el('div', { class: 'wide' }, grid);
+  widths.observe(wide);
+  return wide;
 }

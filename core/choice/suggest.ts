@@ -36,9 +36,16 @@ export interface Suggestion {
 }
 
 /**
+ * 0.05 dB, as a share of the best error: blocks of a long recording tell smaller differences from zero, but they are not
+ * worth a tap (common practice).
+ */
+const negligible = 0.01157945425989968;
+
+/**
  * The one-standard-error rule (Hastie, Tibshirani & Friedman, *The Elements of Statistical Learning*, 2nd ed., 7.10) on
  * paired block differences: the smallest length whose error exceeds the best of all by at most one standard error, then
- * the delay of least error, then the largest regularisation that keeps to the same bound.
+ * the delay of least error, then the largest regularisation that keeps to the same bound. Differences that blocks tell
+ * from zero but that are {@link negligible} count as none.
  * @param keptDelay place of the only delay that may be suggested (a horizon is not free to choose); null for any
  * @returns null where no candidate could be solved on every fold
  */
@@ -56,7 +63,7 @@ export function suggest(result: SearchResult, keptDelay: number | null): Suggest
   });
   const within = (candidate: Candidate) => {
     const { excess, standardError } = pairedExcess(result, candidate, best);
-    return excess <= standardError;
+    return excess <= Math.max(standardError, negligible * error(best));
   };
   const ofLength = grid.lengths.map((_, length) => least(candidatesOf(result, [length], delays), error));
   const shortest = ofLength.find((candidate) => candidate !== null && within(candidate)) ?? best;

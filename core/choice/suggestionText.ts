@@ -19,8 +19,8 @@ export function suggestionText(
   const bestError = decibels(powerDecibels(best.nmse));
   const first =
     best.length === length && best.delay === delay && best.regularisation === regularisation
-      ? `${what} have the least cross-validated error of all candidates, ${error}, and no shorter filter comes within one standard error of the differences over the ${blocks} left-out blocks.`
-      : `${what} make the shortest filter (then the best delay, then the most regularisation) whose cross-validated error, ${error}, exceeds the best, ${bestError} with ${counted(best.length, 'tap')}, by no more than one standard error of the differences over the ${blocks} left-out blocks (${share(excess, best.nmse)} against ${share(standardError, best.nmse)}).`;
+      ? `${what} have the least cross-validated error of all candidates, ${error}, and no shorter filter comes within one standard error of the differences over the ${blocks} left-out blocks, or 0.05 dB.`
+      : `${what} make the shortest filter (then the best delay, then the most regularisation) whose cross-validated error, ${error}, exceeds the best, ${bestError} with ${counted(best.length, 'tap')}, by no more than one standard error of the differences over the ${blocks} left-out blocks, or 0.05 dB (${share(excess, best.nmse)} against ${share(standardError, best.nmse)}).`;
   const place = steps.findIndex((step) => step.length === length);
   const shorter = steps[place - 1];
   const cost = `It costs ${counted(macs(length), 'multiply-accumulate')} a sample`;

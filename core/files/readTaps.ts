@@ -38,8 +38,7 @@ export function readTaps(text: string, file: string): TapsFile {
     throw refusal(file, 'it is not JSON');
   }
   const root = new Reader(value, '', file);
-  if (root.key('taps').value !== 1)
-    throw refusal(file, `"taps" is ${JSON.stringify(root.key('taps').value)} when expected 1`);
+  root.key('taps').oneOf([1]);
   const arithmetic = root.key('arithmetic');
   const taps: TapsFile = {
     document: {
@@ -129,7 +128,7 @@ class Reader {
 
   oneOf<T>(choices: readonly T[]): T {
     const found = choices.find((choice) => choice === this.value);
-    return found ?? this.fail(`one of ${choices.join(', ')}`);
+    return found ?? this.fail(choices.length === 1 ? `${choices[0]}` : `one of ${choices.join(', ')}`);
   }
 
   list<T>(item: (reader: Reader) => T): T[] {

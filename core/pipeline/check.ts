@@ -1,8 +1,4 @@
-import { digestSource } from '../bytes/digest';
-import { resolveInside } from '../document/paths';
-import { documentStem } from '../files/documentStem';
-import { readTaps, type TapsFile } from '../files/readTaps';
-import { selfDigestHolds } from '../files/selfDigest';
+import type { TapsFile } from '../files/readTaps';
 import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
 import type { TargetFilter } from '../numbers/targetFilter';
 import { evaluateDesign } from './design';
@@ -13,6 +9,7 @@ import { measure } from './measure';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
 import { targetFormat, targetScaling } from './targetFormat';
 import type { Target } from './toTarget';
+import { readWritten, staleness } from './writtenFiles';
 
 /** What a check came to. */
 export interface Checked {
@@ -33,11 +30,12 @@ export async function check(host: Host, text: string, place: DocumentPlace): Pro
     const read = await readPairing(host, text, place);
     findings.push(...read.findings);
     if (read.pairing === null) return { state: 'bad-input', result: null, findings: worstFirst(findings) };
-    const written = await readWritten(host, read.pairing, place);
-    const stale =
-      written.taps === null
-        ? written.findings
-        : [...written.findings, ...staleness(read.pairing, written.taps, written.file)];
+    const written = await readWritten(host, read.pairing.document, place);
+    const stale = [...written.findings];
+    if (written.taps !== null) {
+      const digests = new Map([...read.pairing.recordings].map(([file, { sha256 }]) => [file, sha256]));
+      stale.push(...staleness(read.pairing.documentSha256, digests, written.taps, written.file));
+    }
     if (written.taps === null || stale.length > 0) {
       return { state: 'failed', result: null, findings: worstFirst([...findings, ...stale]) };
     }
@@ -57,65 +55,6 @@ export async function check(host: Host, text: string, place: DocumentPlace): Pro
     if (!(error instanceof Refusal)) throw error;
     return { state: 'bad-input', result: null, findings: worstFirst([...findings, ...error.findings]) };
   }
-}
-
-interface WrittenFiles {
-  /** Path of the taps file from the document's folder. */
-  file: string;
-  taps: TapsFile | null;
-  findings: Finding[];
-}
-
-/** Reads the taps file and holds the digests it lists against the files beside it. */
-async function readWritten(host: Host, { document }: Pairing, place: DocumentPlace): Promise<WrittenFiles> {
-  const name = `${documentStem(place.file)}.taps.json`;
-  const within = (path: string) => (document.write.folder === '' ? path : `${document.write.folder}/${path}`);
-  const file = within(name);
-  const text = await readText(host, place.folder, file);
-  if (text === null) return { file, taps: null, findings: [finding('not-written', { file }, { path: [] })] };
-  const taps = readTaps(text, file);
-  const findings: Finding[] = [];
-  if (!selfDigestHolds(text, host.newSha256)) findings.push(finding('edited', {}, { file }));
-  for (const [path, sha256] of Object.entries(taps.files)) {
-    const digest = await digestOf(host, place.folder, within(path));
-    if (digest === null) findings.push(finding('missing-output', {}, { file: within(path) }));
-    else if (digest !== sha256) findings.push(finding('edited', {}, { file: within(path) }));
-  }
-  return { file, taps, findings };
-}
-
-function staleness(pairing: Pairing, taps: TapsFile, tapsFile: string): Finding[] {
-  const findings: Finding[] = [];
-  if (taps.document.sha256 !== pairing.documentSha256) {
-    findings.push(finding('stale-document', {}, { file: tapsFile }));
-  }
-  const known = new Map(taps.recordings.map(({ file, sha256 }) => [file, sha256]));
-  for (const [file, { sha256 }] of pairing.recordings) {
-    if (known.has(file) && known.get(file) !== sha256)
-      findings.push(finding('stale-recording', {}, { file }));
-  }
-  return findings;
-}
-
-async function readText(host: Host, folder: string, file: string): Promise<string | null> {
-  const source = await openInside(host, folder, file);
-  if (source === null) return null;
-  return new TextDecoder().decode(await source.read(0, source.size));
-}
-
-async function digestOf(host: Host, folder: string, file: string): Promise<string | null> {
-  const source = await openInside(host, folder, file);
-  if (source === null) return null;
-  // Version control may have changed the line ends of texts; the NPY file has none to change.
-  return digestSource(source, host.newSha256, !file.endsWith('.npy'), host.pace);
-}
-
-async function openInside(host: Host, folder: string, file: string) {
-  const path = resolveInside(folder, file);
-  const source = path === null ? 'outside' : await host.open(path);
-  if (source === 'missing') return null;
-  if (typeof source === 'string') throw new Refusal([finding('unreadable-file', {}, { file })]);
-  return source;
 }
 
 /** Taps must agree within what the solver keeps: about 1e-14 times the condition number. */

@@ -61,7 +61,7 @@ export async function openRecordings(
 }
 
 /** Each file named, with the mentions of its channels. */
-function mentionsIn({ takes }: PairingDocument): Map<string, Mention[]> {
+export function mentionsIn({ takes }: PairingDocument): Map<string, Mention[]> {
   const files = new Map<string, Mention[]>();
   const add = (track: TrackEntry, path: Path) => {
     files.set(track.file, [...(files.get(track.file) ?? []), { ...track, path }]);

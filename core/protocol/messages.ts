@@ -1,5 +1,6 @@
 import type { OpenFailure } from '../pipeline/host';
 import type { DocumentPlace } from '../pipeline/pairing';
+import type { Seen, WrittenState } from '../pipeline/writtenState';
 import type { Packed } from './pack';
 import type { FindingView, FormView, Part, PlannedFile } from './views';
 
@@ -142,6 +143,11 @@ export interface RecordingHead {
   problems: string[];
 }
 
+/** How a pairing's written files stand. */
+export interface WrittenView extends Omit<WrittenState, 'findings' | 'text'> {
+  findings: FindingView[];
+}
+
 export interface WorkerCalls {
   /** Computes a pairing part by part; a later update of the same session ends an earlier one. */
   update(request: UpdateRequest): Promise<null>;
@@ -154,6 +160,15 @@ export interface WorkerCalls {
   check(
     request: Omit<UpdateRequest, 'generation'>,
   ): Promise<{ state: 'current' | 'failed' | 'bad-input'; findings: FindingView[] }>;
+  /** The same by digests alone, without solving; null where nothing has changed since it was `seen`. */
+  written(request: { root: Root; place: DocumentPlace; seen: Seen | null }): Promise<WrittenView | null>;
+  /** Those of the paths that hold the recording of this digest; `size` in bytes where it is known. */
+  sameRecordings(request: {
+    root: Root;
+    paths: string[];
+    sha256: string;
+    size: number | null;
+  }): Promise<string[]>;
   heads(request: { root: Root; paths: string[] }): Promise<RecordingHead[]>;
   draft(request: DraftRequest): Promise<{ text: string } | { findings: FindingView[] }>;
   stop(request: { session: string }): Promise<null>;

@@ -11,8 +11,14 @@ import { openWav } from './wav/openWav';
  * @param file the name that findings show
  */
 export async function openRecording(source: ByteSource, file: string, pace: Pace): Promise<Opened> {
+  const kind = await binaryKind(source);
+  if (kind === 'wav') return openWav(source, file);
+  return kind === 'npy' ? openNpy(source, file) : openText(source, file, pace);
+}
+
+/** Which of the binary formats a file starts as; null: to be read as text. */
+export async function binaryKind(source: ByteSource): Promise<'wav' | 'npy' | null> {
   const start = String.fromCharCode(...(await source.read(0, Math.min(source.size, 12))));
-  if (/^(RIFF|RF64|BW64|RIFX)/.test(start)) return openWav(source, file);
-  if (start.startsWith('\x93NUMPY')) return openNpy(source, file);
-  return openText(source, file, pace);
+  if (/^(RIFF|RF64|BW64|RIFX)/.test(start)) return 'wav';
+  return start.startsWith('\x93NUMPY') ? 'npy' : null;
 }

@@ -41,7 +41,9 @@ export function newRunningMoments(): RunningMoments {
         if (rest - rest === 0) ownSquares += rest * rest;
       }
       const gap = ownMean - mean;
-      squares += ownSquares + (gap * gap * count * more) / (count + more);
+      // Before the first block there is nothing to merge, and the square of a large gap may be infinite.
+      const between = count === 0 ? 0 : (gap * gap * count * more) / (count + more);
+      squares += ownSquares + between;
       mean += (gap * more) / (count + more);
       count += more;
     },

@@ -47,6 +47,7 @@ export function newFieldBook(): FieldBook {
       for (const field of fields) field.showFindings(byField.get(pathKey(field.path)) ?? []);
     },
     setDisabled(next) {
+      if (next === disabled) return;
       disabled = next;
       for (const field of fields) field.setDisabled(next);
     },

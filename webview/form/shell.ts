@@ -45,6 +45,7 @@ export function newShell({ label, unit = '', help, range }: FieldWords, control:
     found,
   );
   let faulty = false;
+  let shown = '[]';
   let blocked = false;
   const mark = () => {
     element.classList.toggle('wrong', faulty || blocked);
@@ -60,6 +61,9 @@ export function newShell({ label, unit = '', help, range }: FieldWords, control:
       mark();
     },
     showFindings(findings) {
+      const key = JSON.stringify(findings.map(({ severity, text }) => [severity, text]));
+      if (key === shown) return;
+      shown = key;
       found.replaceChildren(
         ...findings.map(({ severity, text }) => el('li', {}, severityMark(severity), ' ', text)),
       );

@@ -2,7 +2,7 @@ import type { ChoiceView } from '../../core/protocol/views';
 import type { PageContext } from '../context';
 import { newButton } from '../controls';
 import { el, setText } from '../elements';
-import { count, decibels, plain } from '../figures';
+import { decibels } from '../figures';
 import { freshness, type PageState, viewOf } from '../state';
 import { suggestionEdit } from '../suggestionEdit';
 import { t } from '../words';
@@ -40,16 +40,7 @@ export function newSuggestion(context: PageContext): {
   };
 }
 
-function inWords(suggestion: NonNullable<ChoiceView['suggestion']>): string {
-  const { length, delay, regularisation, crossDb, heldOutDb, macsPerSample, reason } = suggestion;
-  const choice = t(
-    '{0} taps, delay {1}, regularisation {2}: {3} cross-validated, {4} held-out, {5} multiplies a sample.',
-    count(length),
-    count(delay),
-    plain(regularisation),
-    decibels(crossDb),
-    decibels(heldOutDb),
-    count(macsPerSample),
-  );
-  return `${choice} ${reason}`;
+/** The reason names the three numbers and their cost. */
+function inWords({ heldOutDb, reason }: NonNullable<ChoiceView['suggestion']>): string {
+  return heldOutDb === null ? reason : `${reason} ${t('Held-out: {0}.', decibels(heldOutDb))}`;
 }

@@ -33,7 +33,8 @@ export function curvePath(plot: Plot, curve: Curve, index: number): string {
   return `<path d="${d}" fill="none" stroke-width="1.5" stroke-linejoin="round" ${strokeOf(index)}/>`;
 }
 
-function shownIndices(y: ArrayLike<number>, columns: number): number[] {
+/** The lowest and the highest value of each column, where there are more than two a column. */
+export function shownIndices(y: ArrayLike<number>, columns: number): number[] {
   if (y.length <= 2 * columns) return Array.from({ length: y.length }, (_, i) => i);
   const shown: number[] = [];
   for (let c = 0; c < columns; c++) {

@@ -31,8 +31,10 @@ async function open(source: ByteSource, file: string): Promise<Opened> {
   const header = await readHeader(source, file);
   if ('code' in header) return refused(header);
   const dtype = dtypeOf(header.dtype);
-  if (dtype === null)
-    return refused(finding('unsupported-dtype', { what: `elements of type "${header.dtype}"` }, { file }));
+  if (dtype === null) {
+    const type = header.dtype.length > 40 ? `${header.dtype.slice(0, 40)}…` : header.dtype;
+    return refused(finding('unsupported-dtype', { what: `elements of type "${type}"` }, { file }));
+  }
   const layout = layoutOf(header);
   if (layout.channels < 1 || layout.channels > mostChannels) {
     const values = { what: `${layout.channels} channels`, expected: `1 to ${mostChannels}` };

@@ -26,13 +26,21 @@ function made(errors: number[][][][], change: Partial<SearchResult> = {}): Searc
 
 describe('the rule', () => {
   it('compares block by block: a difference that every block shows counts however the level varies', () => {
-    // 1 % worse in every block, whose levels differ by 20 dB: nothing unpaired would see it.
+    // 2 % worse in every block, whose levels differ by 20 dB: nothing unpaired would see it.
     const levels = [1, 1.2, 100, 120, 10, 12];
-    const found = suggest(made([[[levels.map((v) => 1.01 * v)]], [[levels]]]), null);
+    const found = suggest(made([[[levels.map((v) => 1.02 * v)]], [[levels]]]), null);
     expect(found?.chosen.length).toBe(20);
     // Worse by about as much in the sum, but by chance: better in half of the blocks.
     const chance = levels.map((v, b) => (b % 2 === 0 ? 0.9 : 1.1) * v);
     expect(suggest(made([[[chance]], [[levels]]]), null)?.chosen.length).toBe(10);
+  });
+
+  it('takes a difference below 0.05 dB for none, however sure it is', () => {
+    const levels = [1, 1.2, 100, 120, 10, 12];
+    const worse = (factor: number) =>
+      suggest(made([[[levels.map((v) => factor * v)]], [[levels]]]), null)?.chosen.length;
+    // 10 log10(1.01) = 0.043, 10 log10(1.012) = 0.052.
+    expect([worse(1.01), worse(1.012)]).toEqual([10, 20]);
   });
 
   it('takes the standard error of the paired sum: by hand for three blocks', () => {
