@@ -9,7 +9,7 @@ import { type Position, positionAt } from './position';
  * @param offset the place to give where the text is no JSON
  */
 export function locate(text: string, path: Path, offset = 0): Position {
-  let node = parseJson(text).root;
+  let node = rootOf(text);
   if (node === undefined) return positionAt(text, offset);
   for (const key of path) {
     const child = childOf(node, key);
@@ -17,6 +17,14 @@ export function locate(text: string, path: Path, offset = 0): Position {
     node = child;
   }
   return positionAt(text, node.offset);
+}
+
+/** The text parsed last: all findings of a document are located in the same one. */
+let last: { text: string; root: Node | undefined } = { text: '', root: undefined };
+
+function rootOf(text: string): Node | undefined {
+  if (text !== last.text) last = { text, root: parseJson(text).root };
+  return last.root;
 }
 
 /** Where a finding of this document is: broken JSON and repeated keys bring their place with them. */

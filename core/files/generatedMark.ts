@@ -22,6 +22,7 @@ export type MarkStyle = keyof typeof comments;
 const pattern = /by Tapwright from (.+?); do not edit; made from sha256 ([0-9a-f]{64})/;
 // An NPY file begins with six bytes of magic, and its first line is a Python literal that a comment may end.
 const line = new RegExp(`^\\uFEFF?(?:/\\*|//|#|<!--|[^\\n]?NUMPY[^\\n]*#) ?generated ${pattern.source}`);
+const whole = new RegExp(`^${pattern.source}`);
 const firstKey = /^\uFEFF?\s*\{\s*"generated"\s*:\s*("(?:[^"\\]|\\.)*")/;
 
 /**
@@ -55,7 +56,7 @@ export function markLine(mark: Mark, style: MarkStyle): string {
  * @param text of the file, or as much of its start as holds the first line
  */
 export function readMark(text: string): Mark | null {
-  const match = line.exec(text) ?? pattern.exec(valueOfFirstKey(text));
+  const match = line.exec(text) ?? whole.exec(valueOfFirstKey(text));
   if (match === null) return null;
   const document = match[1].replace(/\\u([0-9a-f]{4})/g, (_, hex: string) =>
     String.fromCharCode(Number.parseInt(hex, 16)),

@@ -4,6 +4,9 @@ import { channelLabel, type Recording } from './recording';
 /** Most channels that a finding names. */
 const named = 12;
 
+/** Characters of each: headers know no limit. */
+const longest = 60;
+
 /**
  * Number from 0 of a channel that a document names: by its name in the file (the first of that name) or by its number
  * from 1; null where the recording has none such.
@@ -22,12 +25,18 @@ export function findChannelByText(recording: Recording, text: string): number | 
 
 /** The finding that a recording has no such channel, with those it has. */
 export function channelMissing(recording: Recording, channel: string | number, place: Place = {}): Finding {
-  const known = recording.channels.slice(0, named).map((_, c) => channelLabel(recording, c));
+  const known = recording.channels.slice(0, named).map((_, c) => short(channelLabel(recording, c)));
   const more = recording.channels.length > named ? ', …' : '';
   const values = {
-    channel: String(channel),
+    channel: short(String(channel)),
     count: recording.channels.length,
     known: known.join(', ') + more,
   };
   return finding('channel-missing', values, { file: recording.file, ...place });
+}
+
+function short(name: string): string {
+  const characters = [...name.slice(0, 2 * longest)];
+  const cut = characters.length > longest || name.length > 2 * longest;
+  return cut ? `${characters.slice(0, longest).join('')}…` : name;
 }

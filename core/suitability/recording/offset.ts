@@ -13,7 +13,8 @@ export function checkOffset({ levels, place }: ChannelFacts): Finding[] {
   const { mean, rms, min, max } = levels;
   if (min === max) return [];
   const varying = Math.sqrt(Math.max(0, rms * rms - mean * mean));
-  if (varying === 0 || Math.abs(mean) <= large * varying) return [];
+  // Nor is there any where squares are beyond all doubles.
+  if (!(varying > 0 && Math.abs(mean) > large * varying)) return [];
   const values = {
     mean: significant(mean),
     varying: significant(varying),
