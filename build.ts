@@ -1,5 +1,5 @@
-import { existsSync, readdirSync } from 'node:fs';
-import { type BuildOptions, build } from 'esbuild';
+import { existsSync, readdirSync, writeFileSync } from 'node:fs';
+import { type BuildOptions, build, type Metafile } from 'esbuild';
 
 /** One run of the bundler; entries that are not there yet are left out. */
 interface Bundle {
@@ -34,6 +34,7 @@ const bundles: Bundle[] = [
 
 /** Bundles what runs: command line, the two sides of the extension, and the page. Prints every size. */
 async function main(): Promise<void> {
+  const made: Metafile[] = [];
   for (const { entries, options } of bundles) {
     const there = Object.entries(entries).filter(([, file]) => existsSync(file));
     if (there.length === 0) continue;
@@ -49,10 +50,13 @@ async function main(): Promise<void> {
       define: { benchFiles: JSON.stringify(benchFiles), ...options.define },
       metafile: true,
     });
+    made.push(result.metafile);
     for (const [file, output] of Object.entries(result.metafile.outputs)) {
       console.log(`${file}  ${(output.bytes / 1024).toFixed(0)} KiB`);
     }
   }
+  // What the bundles were made of, for the notices.
+  writeFileSync('dist/metafiles.json', JSON.stringify(made));
 }
 
 main().catch(() => {

@@ -28,11 +28,12 @@ export function hostCalls(reader: FolderReader, now: () => number = Date.now): H
     listings.set(address, { at: now(), entries });
     return entries;
   };
+  /** Also asked before reading: what was a file may be a link by then. */
+  const leaves = async (uri: string, path: string): Promise<boolean> =>
+    path.split(/[\\/]/).includes('..') || leadsOverLink((folder) => list(reader.join(uri, folder)), path);
   return {
     async stat({ uri, path }) {
-      if (path.split('/').includes('..')) return 'outside';
-      const overLink = await leadsOverLink((folder) => list(reader.join(uri, folder)), path);
-      if (overLink) return 'outside';
+      if (await leaves(uri, path)) return 'outside';
       try {
         const { type, size, mtime } = await reader.stat(reader.join(uri, path));
         if ((type & fileTypes.link) !== 0) return 'outside';
@@ -44,7 +45,7 @@ export function hostCalls(reader: FolderReader, now: () => number = Date.now): H
       }
     },
     async read({ uri, path }) {
-      if (path.split('/').includes('..')) throw new Error(`${path} leaves its root`);
+      if (await leaves(uri, path)) throw new Error(`${path} leaves its root`);
       const bytes = await reader.read(reader.join(uri, path));
       // On a Node host this is a Buffer, perhaps of a shared pool.
       return new Uint8Array(bytes);

@@ -50,7 +50,7 @@ export function designSummary(result: DesignResult, change: DesignChange | null)
     const [taps, effect] = changeInWords(change);
     rows.push(['change', taps], ['', effect]);
   }
-  const title = `${visible(document.title)} (${jobWords[document.job]}, ${result.documentFile})`;
+  const title = `${visible(document.title)} (${jobWords[document.job]}, ${visible(result.documentFile)})`;
   return [title, ...rows.map(([name, text]) => `  ${name.padEnd(9)} ${text}`)].join('\n');
 }
 

@@ -1,4 +1,5 @@
 import { writeSync } from 'node:fs';
+import { visible } from '../../core/figures/visible';
 import { newPace, type Pace } from '../../core/pace';
 
 /** Where a command speaks: results on standard output, everything else on standard error. */
@@ -23,6 +24,9 @@ function write(stream: 1 | 2, text: string): void {
   }
 }
 
+/** What a terminal would obey or hide is spelled out, in JSON too, where it means the same. */
+const seen = (text: string) => text.split('\n').map(visible).join('\n');
+
 export function newTerminal(): Terminal {
   let shown = '';
   const clear = () => {
@@ -33,11 +37,11 @@ export function newTerminal(): Terminal {
   return {
     print(text) {
       clear();
-      write(1, `${text}\n`);
+      write(1, `${seen(text)}\n`);
     },
     complain(text) {
       clear();
-      write(2, `${text}\n`);
+      write(2, `${seen(text)}\n`);
     },
     pace() {
       if (!process.stderr.isTTY) return newPace();

@@ -4,6 +4,7 @@ import { documentFlows } from './flows/document';
 import { formFlows } from './flows/form';
 import { keyboardFlows } from './flows/keyboard';
 import { recordingFlows } from './flows/recordings';
+import { resultFlows } from './flows/result';
 import { writingFlows } from './flows/writing';
 import { flows } from './support/flows';
 import { workbenchIsHere } from './support/programs';
@@ -14,6 +15,7 @@ describe.skipIf(!workbenchIsHere())('in a real workbench', () => {
   formFlows(flow);
   documentFlows(flow);
   writingFlows(flow);
+  resultFlows(flow);
   recordingFlows(flow);
   keyboardFlows(flow);
   appearanceFlows(flow);

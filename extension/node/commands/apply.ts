@@ -1,5 +1,6 @@
 import { open, readFile, rename, rm } from 'node:fs/promises';
 import { basename, dirname, resolve } from 'node:path';
+import { visible } from '../../../core/figures/visible';
 import { findingJson } from '../../../core/files/tapsJson';
 import { finding, Refusal } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
@@ -84,7 +85,9 @@ async function run(given: Arguments): Promise<number> {
           ? `input ${inputs.join(' and ')}`
           : `input ${inputs.join(' and ')}, desired ${desired}`;
       const rate = Number.isInteger(sampleRate) ? '' : `; its header rounds the rate of ${sampleRate} Hz`;
-      terminal.print(`wrote ${output}: the ${application.wanted}, ${samples} samples (${from})${rate}`);
+      terminal.print(
+        visible(`wrote ${output}: the ${application.wanted}, ${samples} samples (${from})${rate}`),
+      );
     }
     return exit.ok;
   } catch (error) {

@@ -1,3 +1,4 @@
+import { visible } from '../../../core/figures/visible';
 import { findingJson, resultJson } from '../../../core/files/tapsJson';
 import { problemLine } from '../../../core/findings/problemLine';
 import { check as runCheck } from '../../../core/pipeline/check';
@@ -48,7 +49,7 @@ async function checkOne(document: string, given: Arguments, terminal: Terminal):
       const figures = result === null ? {} : resultJson(result);
       terminal.print(JSON.stringify({ state, ...figures, findings: findings.map(findingJson) }, null, 2));
     } else if (state === 'current') {
-      terminal.print(`${document}: current`);
+      terminal.print(`${visible(document)}: current`);
     }
     return exits[state];
   } finally {

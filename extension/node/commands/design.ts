@@ -1,3 +1,4 @@
+import { visible } from '../../../core/figures/visible';
 import { changeJson } from '../../../core/files/changeJson';
 import { designFiles } from '../../../core/files/designFiles';
 import { findingJson, resultJson } from '../../../core/files/tapsJson';
@@ -56,7 +57,7 @@ async function designOne(document: string, given: Arguments, terminal: Terminal)
       const changed = change === null ? {} : { change: changeJson(change) };
       terminal.print(JSON.stringify({ ...resultJson(result), ...changed, written: written.files }, null, 2));
     } else {
-      const lines = written.files.map((file) => `  ${file.change.padEnd(9)} ${file.path}`);
+      const lines = written.files.map((file) => `  ${file.change.padEnd(9)} ${visible(file.path)}`);
       terminal.print(lines.join('\n'));
     }
     return findings.some((found) => found.code === 'over-limit') ? exit.failed : exit.ok;

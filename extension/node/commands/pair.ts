@@ -1,6 +1,7 @@
 import { writeFile } from 'node:fs/promises';
 import { basename, dirname, extname, relative, resolve, sep } from 'node:path';
 import { type Job, jobs } from '../../../core/document/pairingDocument';
+import { visible } from '../../../core/figures/visible';
 import { findingJson } from '../../../core/files/tapsJson';
 import { type Finding, finding, Refusal } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
@@ -87,7 +88,9 @@ async function run(given: Arguments): Promise<number> {
     } else {
       const of = (channels: string[], path: string) => `${channels.join(' and ')} of ${basename(path)}`;
       terminal.print(
-        `wrote ${show(output)}: ${job}, input ${of(inputs, inputFile)}, desired ${of([desired], desiredFile)}`,
+        visible(
+          `wrote ${show(output)}: ${job}, input ${of(inputs, inputFile)}, desired ${of([desired], desiredFile)}`,
+        ),
       );
     }
     return exit.ok;

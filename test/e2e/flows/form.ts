@@ -80,6 +80,35 @@ export function formFlows(flow: Flow): void {
     await until('the new length', async () => (await page.field('Length').inputValue()) === '8');
   });
 
+  flow('keeps what is being typed while the figures of the change before it come', async (workbench) => {
+    const page = await openBelt(workbench);
+    await until('nothing left to compute', async () => !(await page.isBusy()), 60_000);
+    const before = await heldOutShown(page);
+    await page.field('Fit to').click({ clickCount: 3 });
+    await workbench.page.keyboard.type('6');
+    await workbench.page.keyboard.press('Enter');
+    await page.field('Held-out to').click({ clickCount: 3 });
+    await workbench.page.keyboard.type('2');
+    await until('another figure', async () => (await heldOutShown(page)) !== before);
+    await until('nothing left to compute', async () => !(await page.isBusy()), 60_000);
+    await workbench.page.keyboard.type('3');
+    expect(await page.field('Held-out to').inputValue()).toBe('23');
+    await workbench.page.keyboard.press('Enter');
+    await workbench.save();
+    const [take] = JSON.parse(workbench.files.read('belt.pairing.json')).takes;
+    expect([take.fit.to, take.heldOut.to]).toEqual([6, 23]);
+  });
+
+  flow('leaves the focus on the take that was chosen', async (workbench) => {
+    const page = await openBelt(workbench);
+    await page.button('medium belt').focus();
+    await workbench.page.keyboard.press('Enter');
+    await until('the other take', async () => {
+      return (await page.field('Name of the take').inputValue()) === 'medium belt';
+    });
+    expect(await page.hasFocus(page.button('medium belt'))).toBe(true);
+  });
+
   flow('marks a wrong value at its field and keeps the last good result', async (workbench) => {
     const page = await openBelt(workbench);
     const before = (await heldOutShown(page)) as number;

@@ -30,6 +30,13 @@ export function writingFlows(flow: Flow): void {
     await page.button('Write files').click();
     await until('the files', written(workbench));
     expectSameFiles(workbench);
+    // Where they went stays in sight once they have been read again, and goes with the next change.
+    const outcome = page.inner.locator('[data-outcome]');
+    await until('that they match', async () => (await page.text()).includes('files written match'));
+    await until('nothing left to compute', async () => !(await page.isBusy()), 60_000);
+    expect(await outcome.isVisible()).toBe(true);
+    await page.type('Length', '16');
+    await until('the outcome gone', async () => !(await outcome.isVisible()));
     await workbench.explorer.waitFor('generated');
   });
 

@@ -2,6 +2,7 @@ import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, expect, it } from 'vitest';
+import { unpackedPackage } from '../../support/unpackedPackage';
 import { startBrowser } from './browser';
 import { titleOf } from './manifest';
 import { project } from './places';
@@ -40,7 +41,8 @@ export function flows(options: PageOptions = {}): Flow {
     if (workbench === null) {
       workbench = await Workbench.open(browser as Browser, {
         ...options,
-        extension: project,
+        // What a user installs, not the tree it is made from.
+        extension: unpackedPackage(project).extension,
         command: titleOf('tapwright.openSampleBench'),
       });
     } else await workbench.reset();
