@@ -1,4 +1,5 @@
 import * as vscode from 'vscode';
+import { registerBeside } from './beside/register';
 import { registerCommands } from './commands/register';
 import { OpenPairings } from './editors/openPairings';
 import { PairingEditor, pairingView } from './editors/pairingEditor';
@@ -7,6 +8,7 @@ import { hostCalls } from './files/hostCalls';
 import { workspaceReader } from './files/workspaceReader';
 import { newLog } from './log';
 import type { Platform } from './platform';
+import type { Services } from './services';
 import { StatusBar } from './statusBar';
 import { WorkerClient } from './workerClient';
 
@@ -19,7 +21,7 @@ export function start(context: vscode.ExtensionContext, platform: Platform): voi
     hostCalls(workspaceReader),
     (why) => log.error(`worker: ${why}`),
   );
-  const services = { extensionUri: context.extensionUri, platform, worker, log, statusBar };
+  const services: Services = { extensionUri: context.extensionUri, platform, worker, log, statusBar };
   const pairings = new OpenPairings(services);
   const several = {
     supportsMultipleEditorsPerDocument: true,
@@ -33,6 +35,6 @@ export function start(context: vscode.ExtensionContext, platform: Platform): voi
     pairings,
     vscode.window.registerCustomEditorProvider(pairingView, new PairingEditor(services, pairings), several),
     ...recordingViews.map((view) => vscode.window.registerCustomEditorProvider(view, recordings, several)),
-    registerCommands(services, pairings),
+    registerCommands(services, pairings, registerBeside(context, services, pairings)),
   );
 }

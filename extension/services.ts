@@ -1,4 +1,5 @@
 import type * as vscode from 'vscode';
+import type { FindingView } from '../core/protocol/views';
 import type { Log } from './log';
 import type { Platform } from './platform';
 import type { StatusBar } from './statusBar';
@@ -11,4 +12,6 @@ export interface Services {
   worker: WorkerClient;
   log: Log;
   statusBar: StatusBar;
+  /** Told what the check of a saved document found. */
+  checked?: (document: vscode.Uri, findings: FindingView[]) => void;
 }

@@ -1,4 +1,5 @@
 import type { Finding, FindingValue } from './finding';
+import { fill, type Phrase } from './phrase';
 import { sentences } from './sentences';
 
 function show(value: FindingValue): string {
@@ -6,25 +7,57 @@ function show(value: FindingValue): string {
   return Number.isInteger(value) ? String(value) : String(Number(value.toPrecision(6)));
 }
 
+/** The finding's sentence and its values, without its place. */
+export function sentenceOf(found: Finding): Phrase {
+  const values = Object.entries(found.values).map(([name, value]) => [name, show(value)]);
+  return { template: sentences[found.code].says, values: Object.fromEntries(values) };
+}
+
 /** The finding's sentence with its values filled in, without its place. */
 export function say(found: Finding): string {
-  return sentences[found.code].says.replace(/\{(\w+)\}/g, (all, name: string) => {
-    const value = found.values[name];
-    return value === undefined ? all : show(value);
-  });
+  const { template, values } = sentenceOf(found);
+  return fill(template, values);
+}
+
+/** Characters of a channel's name that a sentence shows: headers know no limit. */
+const longestName = 80;
+
+function shortened(name: string): string {
+  const characters = [...name.slice(0, 2 * longestName)];
+  return characters.length > longestName || name.length > 2 * longestName
+    ? `${characters.slice(0, longestName).join('')}…`
+    : name;
+}
+
+/** Templates of the parts of a place. */
+export const placeTemplates = {
+  file: '{file}',
+  line: 'line {line}',
+  take: 'take {take}',
+  channel: 'channel {channel}',
+  sample: 'sample {from}',
+  samples: 'samples {from} to {to}',
+} as const;
+
+/** Where a finding is, part by part; none where nothing is known. */
+export function placeParts({ file, line, take, channel, from, to }: Finding): Phrase[] {
+  const parts: Phrase[] = [];
+  const add = (kind: keyof typeof placeTemplates, values: Phrase['values']) =>
+    parts.push({ template: placeTemplates[kind], values });
+  if (file !== undefined) add('file', { file });
+  if (line !== undefined) add('line', { line: `${line}` });
+  if (take !== undefined) add('take', { take });
+  if (channel !== undefined) add('channel', { channel: shortened(channel) });
+  if (from !== undefined && to === undefined) add('sample', { from: `${from}` });
+  if (from !== undefined && to !== undefined) add('samples', { from: `${from}`, to: `${to}` });
+  return parts;
 }
 
 /** Where a finding is, in words: `slow.csv, channel cell, samples 100 to 140`; empty where nothing is known. */
 export function placeInWords(found: Finding): string {
-  const parts: string[] = [];
-  if (found.file !== undefined) parts.push(found.file);
-  if (found.line !== undefined) parts.push(`line ${found.line}`);
-  if (found.take !== undefined) parts.push(`take ${found.take}`);
-  if (found.channel !== undefined) parts.push(`channel ${found.channel}`);
-  if (found.from !== undefined) {
-    parts.push(found.to === undefined ? `sample ${found.from}` : `samples ${found.from} to ${found.to}`);
-  }
-  return parts.join(', ');
+  return placeParts(found)
+    .map(({ template, values }) => fill(template, values))
+    .join(', ');
 }
 
 /** Place and sentence in one line. */

@@ -90,13 +90,15 @@ export async function writtenState(host: Host, place: DocumentPlace, known: Seen
 export async function stillStands(host: Host, { stamps }: Seen): Promise<boolean> {
   const paths = Object.keys(stamps);
   if (paths.length === 0) return false;
-  for (const path of paths) if (stampOf(await host.open(path)) !== stamps[path]) return false;
+  for (const path of paths) {
+    if (stamps[path] === '' || stampOf(await host.open(path)) !== stamps[path]) return false;
+  }
   return true;
 }
 
-/** A file whose changes cannot be told is looked at each time. */
+/** Empty where changes cannot be told: such a file is looked at each time. */
 function stampOf(source: ByteSource | OpenFailure): string {
-  return typeof source === 'string' ? source : (source.stamp ?? `${Number.NaN}`);
+  return typeof source === 'string' ? source : (source.stamp ?? '');
 }
 
 async function documentText(host: Host, { folder, file }: DocumentPlace): Promise<string> {
@@ -144,7 +146,10 @@ async function digests(
       continue;
     }
     const same = known.digests[path] !== undefined && known.stamps[path] === source.stamp;
-    const sha256 = same ? known.digests[path] : await recordingDigest(source, host.newSha256, host.pace);
+    const digest = () => recordingDigest(source, host.newSha256, host.pace);
+    const { stamp } = source;
+    const kept = () => (stamp === undefined ? digest() : host.keep('digest', [path, stamp], digest));
+    const sha256 = same ? known.digests[path] : await kept();
     seen.digests[path] = sha256;
     seen.sizes[path] = source.size;
     byFile.set(file, sha256);

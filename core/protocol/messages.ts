@@ -98,7 +98,11 @@ export interface PageCalls {
   /** A written file or a recording, from the document's folder. */
   openFile(file: string): Promise<null>;
   /** Asks for a file and channel by the workbench's own pickers; null: nothing was chosen. */
-  pickTrack(state: { file: string | null }): Promise<{ file: string; channel: string | number } | null>;
+  pickTrack(state: {
+    file: string | null;
+    /** What the signal is to be, for the question. */
+    role?: 'input' | 'desired';
+  }): Promise<{ file: string; channel: string | number } | null>;
   /** Of a recording: asks for its counterpart, writes a pairing and opens it. */
   pairWith(state: null): Promise<null>;
   openSampleBench(state: null): Promise<null>;
@@ -139,8 +143,8 @@ export interface RecordingHead {
   sampleRate: number | null;
   /** As a document names them. */
   channels: (string | number)[];
-  /** Blockers in words; empty where it can be used. */
-  problems: string[];
+  /** Blockers; empty where it can be used. */
+  problems: FindingView[];
 }
 
 /** How a pairing's written files stand. */

@@ -1,5 +1,6 @@
 import type { Job, PairingDocument } from '../document/pairingDocument';
 import type { Severity } from '../findings/finding';
+import type { Phrase } from '../findings/phrase';
 import type { Interval } from '../pair/intervals';
 
 /**
@@ -15,6 +16,10 @@ export interface FindingView {
   text: string;
   /** `slow.csv, channel cell, samples 100 to 140`; empty where nothing is known. */
   place: string;
+  /** What `text` was made from, for other languages; left out where it is in the user's language already. */
+  sentence?: Phrase;
+  /** The same for `place`. */
+  placeParts?: Phrase[];
   file: string | null;
   take: string | null;
   channel: string | null;

@@ -1,7 +1,7 @@
 import { locateFinding } from '../document/locate';
 import { visible } from '../figures/visible';
 import type { Finding } from '../findings/finding';
-import { placeInWords, say } from '../findings/say';
+import { placeInWords, placeParts, say, sentenceOf } from '../findings/say';
 import type { FindingView } from '../protocol/views';
 
 /**
@@ -15,6 +15,8 @@ export function findingView(found: Finding, text: string | null): FindingView {
     severity: found.severity,
     text: visible(say(found)),
     place: visible(placeInWords(found)),
+    sentence: sentenceOf(found),
+    placeParts: placeParts(found),
     file: found.file ?? null,
     take: found.take ?? null,
     channel: found.channel ?? null,

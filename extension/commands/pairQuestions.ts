@@ -6,6 +6,20 @@ import type { Candidate } from './candidates';
 import { numberFrom } from './numberFrom';
 import { channelInWords, shapeInWords } from './pickRecording';
 
+/**
+ * Asks which of two files has the input: in what order they were selected the explorer does not tell.
+ * Null: cancelled.
+ */
+export async function askInputFile(files: readonly vscode.Uri[]): Promise<vscode.Uri[] | null> {
+  const items = files.map((uri) => ({ label: nameOf(uri.path), uri }));
+  const chosen = await vscode.window.showQuickPick(items, {
+    title: vscode.l10n.t('Recording with the input'),
+    placeHolder: vscode.l10n.t('What the filter will see; the other recording has the desired signal'),
+  });
+  if (chosen === undefined) return null;
+  return [chosen.uri, ...files.filter((uri) => uri !== chosen.uri)];
+}
+
 /** Asks for the input's channels; not asked where there is one. Null: cancelled. */
 export async function askInputs(head: RecordingHead): Promise<(string | number)[] | null> {
   if (head.channels.length === 1) return [...head.channels];
@@ -22,10 +36,14 @@ export async function askInputs(head: RecordingHead): Promise<(string | number)[
   return chosen === undefined || chosen.length === 0 ? null : chosen.map(({ channel }) => channel);
 }
 
-/** Asks for the desired signal among the candidates, the likeliest first. */
+/**
+ * Asks for the desired signal among the candidates, the likeliest first.
+ * @param input in words
+ */
 export async function askDesired(
   listed: readonly Candidate[],
   heads: readonly RecordingHead[],
+  input: string,
 ): Promise<Candidate | null> {
   const items = listed.map((candidate) => ({
     label: channelInWords(candidate.channel),
@@ -34,7 +52,7 @@ export async function askDesired(
     candidate,
   }));
   const chosen = await vscode.window.showQuickPick(items, {
-    title: vscode.l10n.t('Desired signal'),
+    title: vscode.l10n.t('Desired signal for the input {0}', input),
     placeHolder: vscode.l10n.t('What the filter is to give'),
     matchOnDescription: true,
   });

@@ -1,27 +1,31 @@
 import * as vscode from 'vscode';
 import type { RecordingHead } from '../../core/protocol/messages';
+import type { FindingView } from '../../core/protocol/views';
 import { fromRoot, type Spot, spotOf } from '../editors/spot';
 import { isRecording } from '../files/recordingNames';
-import { relativePath } from '../files/relativePath';
+import { nameOf, relativePath } from '../files/relativePath';
 import type { Services } from '../services';
+import { lineOf } from '../translated';
 import { candidates, nearestFirst } from './candidates';
 import { activeFile, openPageOf } from './openViews';
 import { askDocument } from './pairName';
-import { askDesired, askInputs, askJob, askRate } from './pairQuestions';
-import { pickRecording, recordingsOf } from './pickRecording';
+import { askDesired, askInputFile, askInputs, askJob, askRate } from './pairQuestions';
+import { channelInWords, pickRecording, recordingsOf } from './pickRecording';
 
 /** Files whose heads are read at most, beside those that were selected: text recordings must be read whole. */
 const mostHeads = 12;
 
 /**
  * "Pair Recordings…": asks which channel is what, with the likely answer first, writes the document and opens it.
- * @param selected from the explorer, the first of which holds the inputs; none: asked for
+ * @param selected from the explorer: the recording with the inputs, or two of which one has them; none: asked for
  */
 export async function pairRecordings(services: Services, selected: readonly vscode.Uri[]): Promise<void> {
-  const begun = await firstRecording(services, selected);
+  const ordered = selected.length === 2 ? await askInputFile(selected) : selected;
+  if (ordered === null) return;
+  const begun = await firstRecording(services, ordered);
   if (begun === null) return;
   const { spot, path } = begun;
-  const given = selected.slice(1).flatMap((uri) => fromRoot(spot, uri) ?? []);
+  const given = ordered.slice(1).flatMap((uri) => fromRoot(spot, uri) ?? []);
   const others = given.length > 0 ? given : nearestFirst(path, await recordingsOf(spot)).slice(0, mostHeads);
   const [input, ...heads] = await readHeads(services, spot, [path, ...others]);
   if (input.problems.length > 0) return complain(services, input.problems);
@@ -34,6 +38,7 @@ export async function pairRecordings(services: Services, selected: readonly vsco
   const desired = await askDesired(
     [...chosen, ...listed.filter((one) => !chosen.includes(one))],
     [input, ...heads],
+    [nameOf(path), inputs.map(channelInWords).join(', ')].join(' · '),
   );
   if (desired === null) return;
   const other = desired.path === path ? input : heads.find((head) => head.path === desired.path)!;
@@ -56,10 +61,7 @@ export async function pairRecordings(services: Services, selected: readonly vsco
     sampleRate: rate,
   });
   if ('findings' in drafted) {
-    return complain(
-      services,
-      drafted.findings.map(({ place, text }) => (place === '' ? text : `${place}: ${text}`)),
-    );
+    return complain(services, drafted.findings);
   }
   await vscode.workspace.fs.writeFile(document.uri, new TextEncoder().encode(drafted.text));
   await openPageOf(document.uri);
@@ -99,7 +101,8 @@ function readHeads({ worker }: Services, { root }: Spot, paths: string[]): Promi
   );
 }
 
-async function complain({ log }: Services, problems: readonly string[]): Promise<void> {
-  for (const problem of problems) log.error(problem);
-  await vscode.window.showErrorMessage(problems.join('\n'), { modal: true });
+async function complain({ log }: Services, problems: readonly FindingView[]): Promise<void> {
+  const lines = problems.map(lineOf);
+  for (const line of lines) log.error(line);
+  await vscode.window.showErrorMessage(lines.join('\n'), { modal: true });
 }

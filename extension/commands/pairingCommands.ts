@@ -2,7 +2,9 @@ import * as vscode from 'vscode';
 import type { FindingView } from '../../core/protocol/views';
 import type { OpenPairings } from '../editors/openPairings';
 import type { Pairing } from '../editors/pairing';
+import { plainNotice } from '../plainNotice';
 import type { Services } from '../services';
+import { lineOf } from '../translated';
 import { activeFile, openPageOf } from './openViews';
 
 type Report = (pairing: Pairing, services: Services) => Promise<void>;
@@ -44,7 +46,7 @@ export const writeAndReport: Report = async (pairing, services) => {
     written === 0
       ? vscode.l10n.t('{0}: all {1} files are as they were.', pairing.spot.file, files.length)
       : vscode.l10n.t('{0}: {1} of {2} files written.', pairing.spot.file, written, files.length);
-  void vscode.window.showInformationMessage(text);
+  void vscode.window.showInformationMessage(plainNotice(text));
 };
 
 /** Checks what was written and says how it stands. */
@@ -53,7 +55,7 @@ export const checkAndReport: Report = async (pairing, services) => {
   const { file } = pairing.spot;
   if (state === 'current') {
     const text = vscode.l10n.t('{0}: the written files match the document and its recordings.', file);
-    void vscode.window.showInformationMessage(text);
+    void vscode.window.showInformationMessage(plainNotice(text));
     return;
   }
   await openPageOf(pairing.document.uri);
@@ -67,10 +69,10 @@ export const checkAndReport: Report = async (pairing, services) => {
 
 /** The worst finding in sight, all of them in the log. */
 function tellFindings({ log }: Services, text: string, findings: readonly FindingView[]): void {
-  const lines = findings.map(({ place, text: says }) => (place === '' ? says : `${place}: ${says}`));
+  const lines = findings.map(lineOf);
   for (const line of lines) log.warn(line);
   const showLog = vscode.l10n.t('Show Log');
-  void vscode.window.showWarningMessage(`${text} ${lines[0] ?? ''}`, showLog).then((chosen) => {
+  void vscode.window.showWarningMessage(plainNotice(`${text} ${lines[0] ?? ''}`), showLog).then((chosen) => {
     if (chosen === showLog) log.show();
   });
 }

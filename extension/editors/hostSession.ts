@@ -1,5 +1,7 @@
 import * as vscode from 'vscode';
+import { translatedPhrase } from '../../core/findings/translatePhrase';
 import type { Services } from '../services';
+import { dictionary } from '../translated';
 import { Session } from './session';
 
 let last = 0;
@@ -34,7 +36,8 @@ export function newHostSession(
     },
     showBusy: (busy) => {
       // A part that has just begun has no words yet.
-      const what = busy === null || busy.what === '' ? file : `${file}: ${busy.what}`;
+      const what =
+        busy === null || busy.what === '' ? file : `${file}: ${translatedPhrase(busy.what, dictionary())}`;
       statusBar.show(id, busy === null ? null : { what, share: busy.share });
     },
   });

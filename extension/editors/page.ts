@@ -1,6 +1,7 @@
 import * as vscode from 'vscode';
 import type { PageCalls, ToPage } from '../../core/protocol/messages';
 import { type Frame, link } from '../../core/protocol/rpc';
+import { dictionary } from '../translated';
 import { newNonce, pageHtml } from './pageHtml';
 
 /** One webview with the page in it. */
@@ -54,7 +55,7 @@ export function hello(kind: 'pairing' | 'recording', file: string): ToPage {
     type: 'hello',
     kind,
     file,
-    words: vscode.l10n.bundle ?? {},
+    words: dictionary(),
     locale: vscode.env.language,
     trusted: vscode.workspace.isTrusted,
   };

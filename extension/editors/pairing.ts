@@ -145,7 +145,9 @@ export class Pairing {
   check(): ReturnType<PageCalls['check']> {
     return timed(this.services.log, `check ${this.spot.file}`, async () => {
       await this.editing;
-      return this.services.worker.call.check({ session: this.host.id, ...this.request() });
+      const outcome = await this.services.worker.call.check({ session: this.host.id, ...this.request() });
+      if (!this.document.isDirty) this.services.checked?.(this.document.uri, outcome.findings);
+      return outcome;
     });
   }
 
@@ -182,8 +184,8 @@ export class Pairing {
     return { type: 'document', generation: this.host.session.generation, answers, ...this.view };
   }
 
-  /** Of the present generation; null where there are none. */
-  private async files() {
+  /** Files that the present generation would be written to; null where there are none. */
+  async files() {
     const { session, id } = this.host;
     for (let i = 0; i < mostTries; i++) {
       await session.partSettled('firmware');

@@ -42,7 +42,7 @@ export class PairingEditor implements vscode.CustomTextEditorProvider {
         check: () => pairing.check(),
         openAsText: (position) => openAsText(document.uri, position),
         openFile: (file) => openFromDocument(pairing.spot, file, pairing.isRecording(file)),
-        pickTrack: ({ file }) => pickTrack(this.services, pairing.spot, file),
+        pickTrack: ({ file, role }) => pickTrack(this.services, pairing.spot, file, role),
         pairWith: () => command('tapwright.pairRecordings'),
         openSampleBench: () => command('tapwright.openSampleBench'),
         manageTrust: () => command('workbench.trust.manage'),

@@ -25,6 +25,8 @@ export interface Computed {
   read: ReadPairing | null;
   fit: Fit | null;
   result: DesignResult | null;
+  /** `result` is of the newest text: until there is one, and where it was stopped, that of the text before stands there. */
+  current?: boolean;
   /** What the last exact figures depend on. */
   measured: string | null;
   quick: QuickStatistics | null;
@@ -53,6 +55,7 @@ export async function compute(
   send: Send,
   begin: Begin,
 ): Promise<void> {
+  left.current = false;
   let began = 0;
   begin('recordings');
   let figures: FiguresView | null = null;
@@ -79,6 +82,7 @@ export async function compute(
   });
   const { result, findings } = designed;
   left.result = result;
+  left.current = true;
   if (result === null || figures === null) {
     for (const part of ['figures', 'evidence', 'firmware'] as const) send(part, null);
     await inspectOnly(host, text, place, findings, send, begin);

@@ -1,12 +1,12 @@
 import type { NewSha256 } from '../../core/bytes/sha256';
 import { jobs } from '../../core/document/pairingDocument';
 import { finding, Refusal } from '../../core/findings/finding';
-import { sayWithPlace } from '../../core/findings/say';
 import { newPace } from '../../core/pace';
 import { check } from '../../core/pipeline/check';
 import { draftPair } from '../../core/pipeline/draftPair';
 import { failureCodes, type Host } from '../../core/pipeline/host';
-import { keepNothing } from '../../core/pipeline/keep';
+import { keepNothing, newKeep } from '../../core/pipeline/keep';
+import { nothingSeen, stillStands, writtenState } from '../../core/pipeline/writtenState';
 import type { HostCalls, RecordingHead, Root, WorkerCalls } from '../../core/protocol/messages';
 import { pack } from '../../core/protocol/pack';
 import { link, type Port, type Remote } from '../../core/protocol/rpc';
@@ -17,6 +17,7 @@ import { excerptOf } from './excerpt';
 import { hostFiles } from './hostFiles';
 import { envelopeOf } from './lanes';
 import type { RootFiles } from './rootFiles';
+import { sameRecordings } from './sameRecordings';
 import { newSession, type Session } from './session';
 
 /** What a worker has of the place it runs in. */
@@ -25,6 +26,9 @@ export interface Surroundings {
   localFiles: ((folder: string) => RootFiles) | null;
   newSha256: NewSha256;
 }
+
+/** Digests kept; each is small. */
+const mostDigests = 1000;
 
 /** Answers everything that the extension host asks of its worker, over a port. */
 export function serve(port: Port, { localFiles, newSha256 }: Surroundings): void {
@@ -51,6 +55,9 @@ export function serve(port: Port, { localFiles, newSha256 }: Surroundings): void
     }
   };
 
+  /** Recordings that several pairings share are digested once. */
+  const digests = newKeep(mostDigests);
+
   const calls: WorkerCalls = {
     async update(request) {
       await sessionOf(request.session).update(request);
@@ -74,6 +81,14 @@ export function serve(port: Port, { localFiles, newSha256 }: Surroundings): void
         const { state, findings } = await check(host, text, place);
         return { state, findings: findings.map((found) => findingView(found, text)) };
       }),
+    written: ({ root, place, seen }) =>
+      apart(root, async (host) => {
+        if (seen !== null && (await stillStands(host, seen))) return null;
+        const ofRoot: Host = { ...host, keep: (stage, key, make) => digests(stage, [root, key], make) };
+        const { findings, text, ...state } = await writtenState(ofRoot, place, seen ?? nothingSeen);
+        return { ...state, findings: findings.map((found) => findingView(found, text)) };
+      }),
+    sameRecordings: ({ root, ...wanted }) => apart(root, (host) => sameRecordings(host, wanted)),
     heads: ({ root, paths }) => apart(root, (host) => Promise.all(paths.map((path) => headOf(host, path)))),
     draft: ({ root, job, ...request }) =>
       apart(root, async (host) => {
@@ -108,7 +123,9 @@ async function headOf(host: Host, path: string): Promise<RecordingHead> {
     typeof source === 'string'
       ? { recording: null, findings: [finding(failureCodes[source], {}, { file: path })] }
       : await openRecording(source, path, host.pace);
-  const problems = findings.filter(({ severity }) => severity === 'blocker').map(sayWithPlace);
+  const problems = findings
+    .filter(({ severity }) => severity === 'blocker')
+    .map((found) => findingView(found, null));
   return {
     path,
     samples: recording?.samples ?? 0,

@@ -62,6 +62,7 @@ export function newSession(
     read: null,
     fit: null,
     result: null,
+    current: false,
     measured: null,
     quick: null,
     slow: false,
@@ -182,7 +183,7 @@ export function newSession(
       stopped = true;
     },
     files(generation) {
-      return left.result === null || left.generation !== generation
+      return left.result === null || !left.current || left.generation !== generation
         ? null
         : designFiles(left.result, newSha256);
     },

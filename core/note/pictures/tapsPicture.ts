@@ -16,10 +16,10 @@ export interface TapsLine {
 /** Lines drawn at most: a picture in a hover may not be large, and more could not be told apart. */
 export const mostLines = 4;
 
-export const tapsPictureSize = { width: 460, height: 170 } as const;
+export const tapsPictureSize = { width: 460, height: 140 } as const;
 
 const { width, height } = tapsPictureSize;
-const [top, bottom] = [36, height - 34];
+const [top, bottom] = [24, height - 30];
 const points = 241;
 const depth = 80;
 /** As many taps are drawn one by one where there is one row; more as a line. */
@@ -67,8 +67,12 @@ interface Panel {
   y: ReturnType<typeof scaleLinear<number, number>>;
 }
 
+/** Beyond this the height of a plot is more than a double can hold. */
+const largest = 1e300;
+
 function panel(left: number, right: number, x: [number, number], y: [number, number]): Panel {
-  const [low, high] = y[0] < y[1] ? y : [y[0] - 0.5, y[1] + 0.5];
+  const [from, to] = y.map((value) => Math.min(largest, Math.max(-largest, value)));
+  const [low, high] = from < to ? [from, to] : [from - 0.5, to + 0.5];
   return {
     left,
     right,
@@ -95,7 +99,7 @@ function axes({ left, right, x, y }: Panel, title: string, palette: Palette): st
       (v) => `<text x="${left - 4}" y="${at(y(v) + 3.5)}" text-anchor="end">${xmlText(yLabel(v))}</text>`,
     ),
     '</g>',
-    `<text x="${at((left + right) / 2)}" y="${bottom + 27}" text-anchor="middle" fill="${palette.ink}">${xmlText(title)}</text>`,
+    `<text x="${at((left + right) / 2)}" y="${bottom + 25}" text-anchor="middle" fill="${palette.ink}">${xmlText(title)}</text>`,
   ];
 }
 
@@ -141,7 +145,13 @@ function magnitude(lines: readonly TapsLine[], sampleRate: number, palette: Pale
 }
 
 function curve(place: Panel, x: Float64Array, y: Float64Array, index: number, palette: Palette): string {
-  const shown = shownIndices(y, place.right - place.left);
-  const at = shown.map((i) => `${coordinate(place.x(x[i]))},${coordinate(place.y(y[i]))}`);
-  return `<path d="M${at.join('L')}" fill="none" stroke-width="1.5" stroke-linejoin="round" ${stroke(index, palette)}/>`;
+  let d = '';
+  for (const i of shownIndices(y, place.right - place.left)) {
+    const [px, py] = [place.x(x[i]), place.y(y[i])];
+    // The line breaks where a value is beyond what a double can hold.
+    if (Number.isFinite(py))
+      d += `${d === '' || d.endsWith(' ') ? 'M' : 'L'}${coordinate(px)},${coordinate(py)}`;
+    else if (d !== '' && !d.endsWith(' ')) d += ' ';
+  }
+  return `<path d="${d}" fill="none" stroke-width="1.5" stroke-linejoin="round" ${stroke(index, palette)}/>`;
 }

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { RecordingHead } from '../../../core/protocol/messages';
 import { candidates, nearestFirst } from '../../../extension/commands/candidates';
 import { numberFrom } from '../../../extension/commands/numberFrom';
+import { hostFinding } from '../../../extension/findingsOfHost';
 
 const head = (path: string, change: Partial<RecordingHead> = {}): RecordingHead => ({
   path,
@@ -39,9 +40,13 @@ describe('what could be the desired signal', () => {
   });
 
   it('is no file that cannot be used', () => {
-    expect(shown(head('a.wav'), [1], [head('b.wav', { channels: [], problems: ['broken'] })])).toEqual([
-      'a.wav 1',
-    ]);
+    expect(
+      shown(
+        head('a.wav'),
+        [1],
+        [head('b.wav', { channels: [], problems: [hostFinding('empty-file', 'broken')] })],
+      ),
+    ).toEqual(['a.wav 1']);
   });
 
   it('is looked for near by first', () => {

@@ -105,6 +105,22 @@ describe('the worker', () => {
     expect(part(notices, 'figures')?.taps).toBe(24);
   });
 
+  it('has no files of an older design to write where the newer one was stopped', async () => {
+    await update(text());
+    expect(await call.files({ session: 'a', generation })).not.toBeNull();
+    const longer = edited(({ filter }) => {
+      filter.length = 300;
+    });
+    const stopped = update(longer);
+    await call.stop({ session: 'a' });
+    expect((await stopped).at(-1)).toMatchObject({ type: 'idle', generation, stopped: true });
+    expect(await call.files({ session: 'a', generation })).toBeNull();
+    await update(longer);
+    const files = await call.files({ session: 'a', generation });
+    const header = files?.find(({ path }) => path.endsWith('_taps.h'));
+    expect(new TextDecoder().decode(header?.bytes)).toMatch(/BELT_LENGTH\s+300\b/);
+  });
+
   it('still shows the recordings and the suitability where a blocker stops the design', async () => {
     const told = await update(
       edited(({ filter }) => {
