@@ -3,6 +3,7 @@ import { Refusal } from '../../core/findings/finding';
 import { sayWithPlace } from '../../core/findings/say';
 import type { OpenPairings } from '../editors/openPairings';
 import { nameOf } from '../files/relativePath';
+import { plainNotice } from '../plainNotice';
 import type { Beside } from './beside';
 import { committedText } from './committedText';
 import { comparisonText, type Side } from './comparisonText';
@@ -38,13 +39,13 @@ export class Comparison implements vscode.TextDocumentContentProvider {
     const written = taps === null ? null : await textOf(taps);
     if (taps === null || written === null) {
       const text = vscode.l10n.t('{0}: nothing was written yet to compare with.', nameOf(document.path));
-      void vscode.window.showInformationMessage(text);
+      void vscode.window.showInformationMessage(plainNotice(text));
       return;
     }
     const sides = await this.sides(document, taps, written);
     if (sides === null) {
       const text = vscode.l10n.t('{0}: there is no design now to compare with.', nameOf(document.path));
-      void vscode.window.showInformationMessage(text);
+      void vscode.window.showInformationMessage(plainNotice(text));
       return;
     }
     try {
@@ -52,7 +53,7 @@ export class Comparison implements vscode.TextDocumentContentProvider {
       await this.open(nameOf(taps.path), document, text);
     } catch (error) {
       if (!(error instanceof Refusal)) throw error;
-      void vscode.window.showWarningMessage(error.findings.map(sayWithPlace).join(' '));
+      void vscode.window.showWarningMessage(plainNotice(error.findings.map(sayWithPlace).join(' ')));
     }
   }
 

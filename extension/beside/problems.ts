@@ -1,4 +1,5 @@
 import * as vscode from 'vscode';
+import { dictionary } from '../translated';
 import type { Beside } from './beside';
 import { arrayLine } from './generatedNames';
 import { type Problem, problemsOf } from './problemsOf';
@@ -55,7 +56,7 @@ export class Problems {
     const wanted = vscode.workspace
       .getConfiguration('tapwright', vscode.Uri.parse(entry.document))
       .get('problems', true);
-    const problems = wanted ? problemsOf(entry, vscode.l10n.t) : [];
+    const problems = wanted ? problemsOf(entry, vscode.l10n.t, dictionary()) : [];
     const now = await Promise.all(problems.map((problem) => this.placed(entry, problem)));
     this.byDocument.set(entry.document, now);
     const all = [...this.byDocument.values()].flat();

@@ -1,5 +1,7 @@
 import { resolveInside } from '../../core/document/paths';
 import { visible } from '../../core/figures/visible';
+import { type Dictionary, translatedText } from '../../core/findings/translate';
+import { translatedPhrase } from '../../core/findings/translatePhrase';
 import { holdsArray } from './generatedNames';
 import { type Entry, standingOf } from './standing';
 import type { Translate } from './words';
@@ -19,16 +21,21 @@ export interface Problem {
   missing: string | null;
 }
 
-/** What is to be shown of a pairing. A pairing that was never written, and cautions, are no problems. */
-export function problemsOf(entry: Entry, t: Translate): Problem[] {
+/**
+ * What is to be shown of a pairing. A pairing that was never written, and cautions, are no problems.
+ * @param dictionary translations of findings by their English
+ */
+export function problemsOf(entry: Entry, t: Translate, dictionary: Dictionary = {}): Problem[] {
   const { view } = entry;
-  return view === null ? [] : [...ofFiles(entry, view, t), ...ofDocument(entry, view)];
+  return view === null
+    ? []
+    : [...ofFiles(entry, view, t, dictionary), ...ofDocument(entry, view, dictionary)];
 }
 
 type View = NonNullable<Entry['view']>;
 
 /** At the arrays, or where nothing holds one in the taps file. */
-function ofFiles(entry: Entry, view: View, t: Translate): Problem[] {
+function ofFiles(entry: Entry, view: View, t: Translate, dictionary: Dictionary): Problem[] {
   const { document, folder, checked, file } = entry;
   if (view.tapsFile === null) return [];
   const arrays = view.others.filter(holdsArray);
@@ -60,15 +67,22 @@ function ofFiles(entry: Entry, view: View, t: Translate): Problem[] {
   }
   const standing = standingOf(entry);
   if (standing === 'over-limit' || standing === 'different') {
-    const found = (checked ?? []).filter(({ code }) => code === standing).map(({ text }) => text);
-    const texts = found.length > 0 ? found : view.overLimit.map(visible);
+    const found = (checked ?? []).filter(({ code }) => code === standing);
+    const texts =
+      found.length > 0
+        ? found.map((one) => translatedText(one, dictionary))
+        : view.overLimit.map((text) => visible(translatedPhrase(text, dictionary)));
     for (const text of texts) problems.push(...everywhere(standing, text, 'error'));
   }
   return problems;
 }
 
 /** Blockers that have their place in the document. */
-function ofDocument({ document, folder, file, checked }: Entry, view: View): Problem[] {
+function ofDocument(
+  { document, folder, file, checked }: Entry,
+  view: View,
+  dictionary: Dictionary,
+): Problem[] {
   const path = folder === '' ? file : `${folder}/${file}`;
   const known = new Set<string>();
   const problems: Problem[] = [];
@@ -79,7 +93,8 @@ function ofDocument({ document, folder, file, checked }: Entry, view: View): Pro
     if (known.has(key)) continue;
     known.add(key);
     const missing = code === 'missing-file' ? found.file : null;
-    const said = found.file === null ? text : `${visible(found.file)}: ${text}`;
+    const sentence = translatedText(found, dictionary);
+    const said = found.file === null ? sentence : `${visible(found.file)}: ${sentence}`;
     problems.push({ path, at: position, severity: 'error', code, text: said, document, missing });
   }
   return problems;

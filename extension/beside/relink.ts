@@ -6,6 +6,7 @@ import { applyChanges } from '../editors/applyEdit';
 import { spotOf } from '../editors/spot';
 import { recordingEndings } from '../files/recordingNames';
 import { pathBelow, relativePath } from '../files/relativePath';
+import { plainNotice } from '../plainNotice';
 import type { Services } from '../services';
 import { type Beside, passedOver } from './beside';
 import { relinkChanges } from './relinkChanges';
@@ -22,7 +23,7 @@ export async function relinkRecording(
   const sha256 = entry === undefined ? null : await digestOf(beside, entry, missing);
   if (entry === undefined || sha256 === null) {
     const text = vscode.l10n.t('Nothing was written from {0} yet, so that its digest is not known.', missing);
-    void vscode.window.showInformationMessage(text);
+    void vscode.window.showInformationMessage(plainNotice(text));
     return;
   }
   const folder = vscode.Uri.parse(entry.root);
@@ -37,7 +38,7 @@ export async function relinkRecording(
   if (path === undefined) {
     if (found.length === 0) {
       const text = vscode.l10n.t('No recording of the workspace folder holds what {0} held.', missing);
-      void vscode.window.showInformationMessage(text);
+      void vscode.window.showInformationMessage(plainNotice(text));
     }
     return;
   }

@@ -96,7 +96,7 @@ describe('the state of written files by digests', async () => {
     ['edited', { 'fir/generated/path_taps.h': 'int path_taps[1];' }],
     ['bad-input', { 'fir/path.pairing.json': '{' }],
     ['bad-input', { 'fir/generated/path.taps.json': '{}' }],
-  ] as const)('is %s', async (word, changed) => {
+  ] as [string, Files][])('is %s', async (word, changed) => {
     const now: Files = { ...files, ...changed };
     expect((await look(now)).state).toBe(word);
     const text = String(now['fir/path.pairing.json']);
