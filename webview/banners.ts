@@ -3,7 +3,7 @@ import type { PageContext, Section } from './context';
 import { newButton } from './controls';
 import { el, setText } from './elements';
 import { isBroken, missingKeys } from './readable';
-import { t } from './words';
+import { t, textOf } from './words';
 
 /** What stands in the way of the whole page: a text that cannot be read, a bug; and `failure`, what just failed, for the strip. */
 export function newBanners(
@@ -44,11 +44,12 @@ export function newBanners(
   };
 }
 
-function unreadable({ text, position }: FindingView, broken: boolean, shown: boolean): string {
+function unreadable(first: FindingView, broken: boolean, shown: boolean): string {
   const parts = [broken ? t('The document is broken.') : t('The document has a fault.')];
   if (shown) parts.push(t('The last good state is shown.'));
+  const { position } = first;
   if (position !== null) parts.push(t('Line {0}, column {1}:', position.line, position.column));
-  // The sentence of broken JSON begins with its place itself.
-  parts.push(text.replace(/^line \d+, column \d+: /, ''));
+  // The sentence of broken JSON begins with its place itself, in any language.
+  parts.push(textOf(first).replace(/^\p{L}+ \d+, \p{L}+ \d+: /u, ''));
   return parts.join(' ');
 }

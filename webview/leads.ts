@@ -51,6 +51,12 @@ const anchors: Record<string, string> = {
   'suggestion-unsolvable': 'choice',
 };
 
+/** Values that a finding is about without having a place in the document. */
+const values: Record<string, Path> = {
+  'foreign-file': ['write', 'folder'],
+  'not-writable': ['write', 'folder'],
+};
+
 /**
  * Its field, its samples, its plot or table, or its place in the text, whichever comes first; null where it has none.
  * @param fields paths of the fields on the page
@@ -72,6 +78,8 @@ export function leadOf(
     const path = nearestPlace(fields, found.path);
     if (path !== null) return { kind: 'field', path };
   }
+  const value = Object.hasOwn(values, found.code) ? nearestPlace(fields, values[found.code]) : null;
+  if (value !== null) return { kind: 'field', path: value };
   const anchor = anchors[found.code];
   if (anchor !== undefined && has(anchor)) return { kind: 'anchor', anchor };
   return found.position === null ? null : { kind: 'text', position: found.position };

@@ -104,6 +104,7 @@ function build(context: PageContext, kind: 'pairing' | 'recording') {
     fail: banners.fail,
     update(fill: boolean) {
       const state = context.state();
+      outcome.update(state);
       for (const section of sections) {
         // A bug in one section must not silence the strip and the others.
         try {

@@ -3,7 +3,7 @@ import type { FileView } from '../core/protocol/views';
 import { count, decibels, macsPerSecond, plain } from './figures';
 import { missingKeys } from './readable';
 import { allFindings, type Freshness, freshness, type PageState, viewOf, wasStopped } from './state';
-import { t } from './words';
+import { phrase, placeOf, t, textOf } from './words';
 
 /** What the strip says. */
 export interface StripText {
@@ -41,7 +41,7 @@ export function stripText(state: PageState): StripText {
 function recordingText(state: PageState): StripText {
   const how = freshness(state, 'recording');
   const file = viewOf(state, 'recording')?.file ?? null;
-  const texts = file === null ? [] : [file.format, ...shapeOf(file)];
+  const texts = file === null ? [] : [phrase(file.format), ...shapeOf(file)];
   const broken = how === 'fresh' && file === null ? t('The recording cannot be read.') : null;
   return {
     title: state.file,
@@ -83,7 +83,7 @@ function figures(state: PageState): StripText['figures'] {
   }
   const firmware = viewOf(state, 'firmware');
   if (firmware !== null && firmware.lossDb !== null) {
-    const text = t('{0} loss {1}', firmware.word, decibels(firmware.lossDb, 2));
+    const text = t('{0} loss {1}', phrase(firmware.word), decibels(firmware.lossDb, 2));
     list.push({ text, freshness: freshness(state, 'firmware') });
   }
   if (fast !== null) list.push({ text: taps(fast), freshness: freshness(state, 'figures') });
@@ -107,8 +107,8 @@ function why(state: PageState): string | null {
   if (how === 'computing') return t('Being computed anew; the figures shown are of an earlier state.');
   if (how === 'awaited') return t('Being computed.');
   if (blocker) {
-    const place = blocker.place === '' ? '' : `${blocker.place}: `;
-    return t('No result: {0}', place + blocker.text) + tail;
+    const place = placeOf(blocker);
+    return t('No result: {0}', (place === '' ? '' : `${place}: `) + textOf(blocker)) + tail;
   }
   if (wasStopped(state)) return t('Stopped before there was a result.') + tail;
   return state.trouble === null ? t('No result.') + tail : t('No result: {0}', state.trouble) + tail;

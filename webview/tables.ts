@@ -2,10 +2,10 @@ import { el } from './elements';
 
 export type Cell = string | Node;
 
-/** Tables that are wider than their place scroll by themselves, by the keyboard too; others are no stop for it. */
+/** Tables that are larger than their place scroll by themselves, by the keyboard too; others are no stop for it. */
 const widths = new ResizeObserver((entries) => {
   for (const { target } of entries) {
-    const scrolls = target.scrollWidth > target.clientWidth;
+    const scrolls = target.scrollWidth > target.clientWidth || target.scrollHeight > target.clientHeight + 1;
     const caption = target.querySelector('caption')?.textContent ?? '';
     for (const [name, value] of Object.entries({ tabindex: '0', role: 'region', 'aria-label': caption })) {
       if (scrolls) target.setAttribute(name, value);

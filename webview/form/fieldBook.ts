@@ -11,6 +11,8 @@ export interface Field {
   showFindings(findings: readonly FindingView[]): void;
   setDisabled(disabled: boolean): void;
   focus(): void;
+  /** True while it holds text that is being typed: it must not be built anew then. */
+  isOpen?(): boolean;
 }
 
 /** All fields on the page. */

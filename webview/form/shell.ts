@@ -1,6 +1,7 @@
 import type { FindingView } from '../../core/protocol/views';
 import { el, newId, setAttribute } from '../elements';
 import { severityMark } from '../severity';
+import { textOf } from '../words';
 
 /** What every field says about itself. */
 export interface FieldWords {
@@ -65,7 +66,7 @@ export function newShell({ label, unit = '', help, range }: FieldWords, control:
       if (key === shown) return;
       shown = key;
       found.replaceChildren(
-        ...findings.map(({ severity, text }) => el('li', {}, severityMark(severity), ' ', text)),
+        ...findings.map((one) => el('li', {}, severityMark(one.severity), ' ', textOf(one))),
       );
       blocked = findings.some(({ severity }) => severity === 'blocker');
       mark();

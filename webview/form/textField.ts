@@ -92,5 +92,6 @@ export function newTextField<V>(spec: TypedField<V>, edit: (changes: Change[]) =
       input.disabled = disabled;
     },
     focus: () => input.focus(),
+    isOpen: () => typing.focused && isOpen(typing),
   };
 }

@@ -16,6 +16,8 @@ const startGain = 0.1;
 interface Sound {
   lane: string;
   label: string;
+  /** Lanes that share its scale, so that before and after compare by ear. */
+  scale: string[];
 }
 
 /** Buttons that play an excerpt of the input, the desired signal and the result. */
@@ -41,7 +43,7 @@ export function newListenPanel(
       'p',
       { class: 'rest' },
       t(
-        'Start with a low volume: the loudest value of what is played becomes full scale, and a filter can turn noise into something loud.',
+        'Start with a low volume: the loudest value becomes full scale, the same for the desired signal and the result, and the input has its own. A filter can turn noise into something loud.',
       ),
     ),
     buttons,
@@ -50,19 +52,19 @@ export function newListenPanel(
   );
   let job: Job | null = null;
 
-  const play = async ({ lane, label }: Sound) => {
+  const play = async ({ lane, label, scale }: Sound) => {
     const range = excerpt();
     if (range === null) return setText(said, t('Nothing is in view to be played.'));
     setText(said, t('Fetching {0}…', label));
     const packed = await context.calls.excerpt({
       take: range.take,
-      lanes: [lane],
+      lanes: scale,
       from: range.from,
       to: range.to,
     });
     const { sampleRate, lanes } = unpack<Excerpt>(packed);
     const largest = largestOf(lanes.map(({ samples }) => samples));
-    const samples = lanes[0]?.samples ?? new Float64Array(0);
+    const samples = lanes.find((one) => one.lane === lane)?.samples ?? new Float64Array(0);
     player.play(toSound(samples, largest), sampleRate, () => setText(said, ''));
     setText(said, t('Playing {0}, {1} s.', label, plain(samples.length / sampleRate, 3)));
   };
@@ -87,7 +89,12 @@ function soundsOf(job: Job): Sound[] {
     job === 'cancel'
       ? { lane: 'error', label: t('cleaned') }
       : { lane: 'output', label: job === 'predict' ? t('forecast') : t('output') };
-  return [{ lane: 'input:0', label: t('input') }, { lane: 'desired', label: t('desired') }, result];
+  const scale = ['desired', result.lane];
+  return [
+    { lane: 'input:0', label: t('input'), scale: ['input:0'] },
+    { lane: 'desired', label: t('desired'), scale },
+    { ...result, scale },
+  ];
 }
 
 /** What is in view, or its start where that is longer than an excerpt. */

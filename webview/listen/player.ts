@@ -32,7 +32,9 @@ export function newPlayer(startGain: number): Player {
       next.buffer = buffer;
       next.connect(node);
       next.onended = () => {
-        if (source === next) source = null;
+        // One that gave way to another or was stopped says nothing: it ends after the next has begun.
+        if (source !== next) return;
+        source = null;
         ended();
       };
       // From silence up, so that nothing begins with a jump.

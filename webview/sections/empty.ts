@@ -34,7 +34,7 @@ export function newEmptyState(context: PageContext): Section {
     const chosen: TrackEntry[] = [];
     for (const [i, file] of files.slice(0, 2).entries()) {
       setText(said, i === 0 ? t('First the input.') : t('Now the desired signal.'));
-      const track = await context.calls.pickTrack({ file });
+      const track = await context.calls.pickTrack({ file, role: i === 0 ? 'input' : 'desired' });
       if (track === null) {
         setText(said, t('Nothing was chosen.'));
         return;

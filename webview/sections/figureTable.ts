@@ -2,7 +2,7 @@ import type { EvidenceView } from '../../core/protocol/views';
 import { el } from '../elements';
 import { count, decibels, decibelsWithError, plain } from '../figures';
 import { type Cell, table } from '../tables';
-import { t } from '../words';
+import { phrase, t } from '../words';
 
 /** What the filter is worth: fit, held-out, limit, by take and by band. */
 export function figureTables(view: EvidenceView): HTMLElement[] {
@@ -19,7 +19,7 @@ export function figureTables(view: EvidenceView): HTMLElement[] {
   if (view.outsideBandDb !== null) {
     rows.push([t('outside the band'), decibels(view.outsideBandDb), t('not weighed in the fit')]);
   }
-  rows.push([t('condition number'), plain(view.conditionNumber, 3), view.method]);
+  rows.push([t('condition number'), plain(view.conditionNumber, 3), phrase(view.method)]);
   const takes = view.takes.map(({ name, nmseDb, standardErrorDb, samples }) => [
     name,
     decibelsWithError(nmseDb, standardErrorDb),

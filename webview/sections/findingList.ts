@@ -3,7 +3,7 @@ import type { PageContext } from '../context';
 import { newButton } from '../controls';
 import { el } from '../elements';
 import { severityMark } from '../severity';
-import { t } from '../words';
+import { placeOf, t, textOf } from '../words';
 
 /** Findings worst first, each with the way to its place. */
 export function findingList(findings: readonly FindingView[], context: PageContext): HTMLElement {
@@ -13,11 +13,12 @@ export function findingList(findings: readonly FindingView[], context: PageConte
 function findingItem(found: FindingView, context: PageContext): HTMLElement {
   const item = el('li', { 'data-code': found.code }, severityMark(found.severity), ' ');
   const lead = context.leadTo(found);
-  if (found.place !== '') item.append(el('span', { class: 'place' }, `${found.place}: `));
-  item.append(found.text);
+  const [place, text] = [placeOf(found), textOf(found)];
+  if (place !== '') item.append(el('span', { class: 'place' }, `${place}: `));
+  item.append(text);
   if (lead !== null) {
     const button = newButton(t('Show'), lead);
-    button.element.setAttribute('aria-label', t('Show: {0}', found.place === '' ? found.text : found.place));
+    button.element.setAttribute('aria-label', t('Show: {0}', place === '' ? text : place));
     item.append(' ', button.element);
   }
   return item;

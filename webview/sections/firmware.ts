@@ -1,8 +1,8 @@
 import type { FindingView, FirmwareView, PlannedFile } from '../../core/protocol/views';
 import type { PageContext, Section } from '../context';
 import { el, whenChanged } from '../elements';
-import { freshness, viewOf } from '../state';
-import { t } from '../words';
+import { viewOf } from '../state';
+import { phrase, t } from '../words';
 import { arithmeticFields } from './arithmeticFields';
 import { newDetails } from './details';
 import { findingList } from './findingList';
@@ -11,9 +11,15 @@ import { newFrame } from './frame';
 import { newPreview } from './preview';
 import { writeFields } from './writeFields';
 
+export interface Outcome {
+  heading: string;
+  files: readonly PlannedFile[];
+  findings: readonly FindingView[];
+}
+
 export interface FirmwareSection extends Section {
-  /** What a writing or a check came to. */
-  showOutcome(heading: string, files: readonly PlannedFile[], findings: readonly FindingView[]): void;
+  /** What a writing or a check came to; null: nothing that still holds. */
+  showOutcome(outcome: Outcome | null): void;
 }
 
 /** The numbers of the target and the files for it. */
@@ -48,18 +54,18 @@ export function newFirmware(context: PageContext): FirmwareSection {
     wordRows.replaceChildren(...(table === null ? [] : [table]));
     preview.show(view?.preview ?? null);
   });
-  let generation = 0;
   return {
     element: frame.element,
-    showOutcome(title, written, findings) {
-      heading.textContent = title;
+    showOutcome(shown) {
+      outcome.hidden = shown === null;
+      if (shown === null) return;
+      const { files: written, findings } = shown;
+      heading.textContent = shown.heading;
       outcome.replaceChildren(
         heading,
         ...(written.length > 0 ? [fileList(written, context, true)] : []),
         ...(findings.length > 0 ? [findingList(findings, context)] : []),
       );
-      outcome.hidden = false;
-      generation = context.state().generation;
       heading.focus();
     },
     update(state) {
@@ -68,15 +74,13 @@ export function newFirmware(context: PageContext): FirmwareSection {
       const view = viewOf(state, 'firmware');
       show(view);
       words.hidden ||= view?.words === null || view === null;
-      // What was said of an older document does not stand beside a newer one.
-      if (state.generation > generation && freshness(state, 'firmware') !== 'fresh') outcome.hidden = true;
     },
   };
 }
 
 function numberTables(view: FirmwareView): HTMLElement[] {
   const { verdict, safe } = view.overflow;
-  const shape = safe ? `✓ ${verdict}` : `▲ ${verdict}`;
+  const shape = safe ? `✓ ${phrase(verdict)}` : `▲ ${phrase(verdict)}`;
   return [
     el('p', { 'data-anchor': 'overflow', class: safe ? 'verdict' : 'verdict caution' }, shape),
     rowTable(t('Number format'), view.format),
@@ -85,6 +89,6 @@ function numberTables(view: FirmwareView): HTMLElement[] {
 }
 
 function plannedFiles(view: FirmwareView, context: PageContext): HTMLElement[] {
-  const changes = view.change.map((text) => el('p', {}, text));
+  const changes = view.change.map((text) => el('p', {}, phrase(text)));
   return [fileList(view.files, context, false), ...changes];
 }

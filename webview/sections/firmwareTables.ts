@@ -3,13 +3,13 @@ import type { PageContext } from '../context';
 import { el } from '../elements';
 import { count, decibels } from '../figures';
 import { table } from '../tables';
-import { t } from '../words';
+import { phrase, t } from '../words';
 
 /** Label and value in words. */
 export function rowTable(caption: string, rows: readonly Row[]): HTMLElement {
   const cells = rows.map(({ label, value, note }) => [
-    label,
-    note === undefined ? value : `${value} (${note})`,
+    phrase(label),
+    note === undefined ? phrase(value) : `${phrase(value)} (${phrase(note)})`,
   ]);
   return table(caption, [t('what'), t('value')], cells);
 }
@@ -19,7 +19,7 @@ export function wordTable({ words }: FirmwareView): HTMLElement | null {
   if (words === null) return null;
   const rows = words.map((one) => [
     one.chosen ? t('{0} bits (chosen)', one.word) : t('{0} bits', one.word),
-    one.rounding,
+    phrase(one.rounding),
     String(one.fractionBits),
     String(one.accumulatorBits),
     decibels(one.lossDb, 2),

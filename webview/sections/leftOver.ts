@@ -2,7 +2,7 @@ import type { EvidenceView } from '../../core/protocol/views';
 import { el } from '../elements';
 import { newPlot } from '../plots/lines';
 import { table } from '../tables';
-import { t } from '../words';
+import { phrase, t } from '../words';
 
 /** What is left after the filter: tests, and how it hangs together with itself. */
 export function newLeftOver(): { element: HTMLElement; show(view: EvidenceView | null): void } {
@@ -37,12 +37,9 @@ function plotOf({ lags, correlation, bound }: NonNullable<EvidenceView['leftOver
 }
 
 function testTable({ residuals }: EvidenceView): HTMLElement {
-  const rows = residuals.map(({ test, expected, found, probability }) => [
-    test,
-    expected,
-    found,
-    probability,
-  ]);
+  const rows = residuals.map(({ test, expected, found, probability }) =>
+    [test, expected, found, probability].map(phrase),
+  );
   const head = [t('test'), t('expected'), t('found'), t('probability')];
   return table(t('Tests of what is left'), head, rows);
 }
@@ -52,6 +49,6 @@ function cautionList(cautions: readonly string[]): HTMLElement {
     'div',
     { class: 'cautions' },
     el('h3', {}, t('Cautions')),
-    el('ul', {}, ...cautions.map((text) => el('li', {}, text))),
+    el('ul', {}, ...cautions.map((text) => el('li', {}, phrase(text)))),
   );
 }

@@ -2,7 +2,7 @@ import type { FileView } from '../../core/protocol/views';
 import { el } from '../elements';
 import { count, decibels, plain } from '../figures';
 import { table } from '../tables';
-import { t } from '../words';
+import { phrase, t } from '../words';
 
 /** Levels of the channels that are used. */
 export function levelTable(files: readonly FileView[]): HTMLElement {
@@ -39,7 +39,7 @@ export function levelTable(files: readonly FileView[]): HTMLElement {
 export function fileTable(files: readonly FileView[]): HTMLElement {
   const rows = files.map(({ file, format, samples, sampleRate, channels }) => [
     file,
-    format,
+    phrase(format),
     sampleRate === null ? t('not said') : t('{0} Hz', plain(sampleRate, 8)),
     count(samples),
     String(channels.length),

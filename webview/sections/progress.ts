@@ -3,7 +3,7 @@ import type { PageContext } from '../context';
 import { newButton } from '../controls';
 import { el, newId, setText } from '../elements';
 import { freshness, type PageState, wasStopped } from '../state';
-import { t } from '../words';
+import { phrase, t } from '../words';
 
 /** Milliseconds of work before progress shows: what is over sooner would only flicker. */
 const patience = 250;
@@ -41,7 +41,7 @@ export function newProgress(
       if (part !== undefined) {
         const { what, share } = state.busy.get(part)!;
         bar.value = share;
-        setText(words, t('{0}: {1} %', what === '' ? t('computing') : what, Math.floor(100 * share)));
+        setText(words, t('{0}: {1} %', what === '' ? t('computing') : phrase(what), Math.floor(100 * share)));
         if (element.hidden) timer ??= setTimeout(show, patience);
       } else if (stopped) {
         setText(words, t('Stopped. What is shown is not of this document.'));

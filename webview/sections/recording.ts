@@ -10,6 +10,7 @@ import { t } from '../words';
 import { findingList, nothingElse } from './findingList';
 import { newFrame } from './frame';
 import { fileTable, levelTable } from './levelTable';
+import { channelName } from './signalNames';
 import { spectrumCurves } from './spectrumCurves';
 
 /** A recording by itself: levels, waveform, spectrum, findings, and the way to a pair. */
@@ -30,9 +31,15 @@ export function newRecording(context: PageContext): Section & { lanes: Lanes } {
     x: { label: t('Frequency'), unit: t('Hz') },
     y: { label: t('Power'), unit: t('dB re 1/Hz') },
   });
+  // Hertz would be a lie where the file does not say its rate.
+  const relative = newPlot({
+    title: t('Spectrum'),
+    x: { label: t('Frequency'), unit: t('cycles a sample') },
+    y: { label: t('Power'), unit: t('dB re 1 a cycle a sample') },
+  });
   spectrum.element.dataset.anchor = 'spectra';
   frame.fields.append(el('div', { class: 'buttons' }, pair.element), findings);
-  for (const element of [lanes.element, spectrum.element, tables]) {
+  for (const element of [lanes.element, spectrum.element, relative.element, tables]) {
     frame.plots.append(frame.follow(element, 'recording'));
   }
   const show = whenChanged((view: RecordingView | null) => {
@@ -43,7 +50,11 @@ export function newRecording(context: PageContext): Section & { lanes: Lanes } {
     lanes.show(file === null ? null : channelLanes(file, context.state().parts.recording?.stamp ?? 0));
     const kept = context.keeper.state.views.recording;
     if (file !== null && kept !== undefined && kept.to <= file.samples) lanes.setView(kept);
-    spectrum.show(view.spectrum === null ? null : { curves: spectrumCurves(view.spectrum), marks: [] });
+    const curves = view.spectrum === null ? [] : spectrumCurves(view.spectrum);
+    const named = curves.map((curve) => ({ ...curve, label: channelName(curve.label) }));
+    const known = file?.sampleRate != null;
+    spectrum.show(known && named.length > 0 ? { curves: named, marks: [] } : null);
+    relative.show(!known && named.length > 0 ? { curves: named, marks: [] } : null);
   });
   return {
     element: frame.element,
@@ -53,7 +64,9 @@ export function newRecording(context: PageContext): Section & { lanes: Lanes } {
       const view = viewOf(state, 'recording');
       show(view);
       lanes.element.hidden ||= view?.file === null;
-      spectrum.element.hidden ||= view?.spectrum === null;
+      const rate = view?.file?.sampleRate ?? null;
+      spectrum.element.hidden ||= view?.spectrum === null || rate === null;
+      relative.element.hidden ||= view?.spectrum === null || rate !== null;
       pair.setDisabled(freshness(state, 'recording') !== 'fresh' || view?.file === null);
     },
   };
@@ -62,7 +75,7 @@ export function newRecording(context: PageContext): Section & { lanes: Lanes } {
 function channelLanes(file: NonNullable<RecordingView['file']>, stamp: number): LanesData {
   const lanes = file.channels.map(({ label, min, max }, i) => ({
     lane: `channel:${i}`,
-    label,
+    label: channelName(label),
     role: 'desired' as const,
     min: min ?? -1,
     max: max ?? 1,

@@ -5,6 +5,7 @@ import { el, whenChanged } from '../elements';
 import { newNumberField } from '../form/numberField';
 import { newTextField } from '../form/textField';
 import { dragInterval } from '../intervalEdits';
+import { keepFocus } from '../keepFocus';
 import { newLanes } from '../plots/lanes';
 import type { Lanes } from '../plots/types';
 import { freshness, type PageState, viewOf } from '../state';
@@ -41,7 +42,11 @@ export function newRecordings(context: PageContext): RecordingsSection {
 
   const showTakes = whenChanged((_key: string) => {
     const { form } = context.state();
-    if (form !== null) takes.replaceChildren(takeTable(form, viewOf(context.state(), 'recordings'), context));
+    if (form === null) return;
+    const scroll = takes.firstElementChild?.scrollTop ?? 0;
+    const table = takeTable(form, viewOf(context.state(), 'recordings'), context);
+    keepFocus(takes, () => takes.replaceChildren(table));
+    table.scrollTop = scroll;
   });
   const showTables = whenChanged((view: RecordingsView | null) => {
     if (view !== null) tables.replaceChildren(levelTable(view.files), fileTable(view.files));
@@ -140,9 +145,9 @@ function rateField({ edit }: PageContext) {
 }
 
 async function pickTake(context: PageContext): Promise<void> {
-  const input = await context.calls.pickTrack({ file: null });
+  const input = await context.calls.pickTrack({ file: null, role: 'input' });
   if (input === null) return;
-  const desired = await context.calls.pickTrack({ file: null });
+  const desired = await context.calls.pickTrack({ file: null, role: 'desired' });
   const { form } = context.state();
   if (desired === null || form === null) return;
   context.edit(addTake(form, input, desired));

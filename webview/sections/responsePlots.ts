@@ -4,8 +4,9 @@ import { newDropdown } from '../controls';
 import { el, newId } from '../elements';
 import { newPlot } from '../plots/lines';
 import type { Curve, Plot } from '../plots/types';
-import { t } from '../words';
+import { phrase, t } from '../words';
 import { newDetails } from './details';
+import { inputName } from './signalNames';
 
 /** Taps and response of one input's filter at a time. */
 export function newResponsePlots(context: PageContext): {
@@ -49,13 +50,15 @@ export function newResponsePlots(context: PageContext): {
   const draw = () => {
     const taps = view?.impulses[input] ?? null;
     const response = view?.responses[input] ?? null;
-    withheld.textContent = view?.errorsWithheld ?? '';
-    impulse.show(taps === null ? null : { curves: [stems(taps)], marks: [] });
+    const reason = view?.errorsWithheld ?? null;
+    withheld.textContent = reason === null ? '' : t('No error bars: {0}.', phrase(reason));
+    const label = inputName(taps?.label ?? '', input, view?.impulses.length ?? 0);
+    impulse.show(taps === null ? null : { curves: [{ ...stems(taps), label }], marks: [] });
     if (response === null) {
       for (const plot of [magnitude, phase, delay]) plot.show(null);
       return;
     }
-    const { label, frequencies: x, magnitudeDb, lowDb, highDb } = response;
+    const { frequencies: x, magnitudeDb, lowDb, highDb } = response;
     line(magnitude, { label, role: 'figure', x, y: magnitudeDb, low: lowDb, high: highDb });
     line(phase, { label, role: 'figure', x, y: response.phase });
     line(delay, { label, role: 'figure', x, y: response.groupDelay });
@@ -67,7 +70,9 @@ export function newResponsePlots(context: PageContext): {
       const inputs = view?.impulses ?? [];
       input = Math.min(input, Math.max(0, inputs.length - 1));
       choice.hidden = inputs.length < 2;
-      picker.setChoices(inputs.map(({ label }, i) => ({ value: String(i), label })));
+      picker.setChoices(
+        inputs.map(({ label }, i) => ({ value: String(i), label: inputName(label, i, inputs.length) })),
+      );
       picker.set(String(input));
       draw();
     },

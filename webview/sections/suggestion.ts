@@ -5,7 +5,7 @@ import { el, setText } from '../elements';
 import { decibels } from '../figures';
 import { freshness, type PageState, viewOf } from '../state';
 import { suggestionEdit } from '../suggestionEdit';
-import { t } from '../words';
+import { phrase, t } from '../words';
 
 /** The suggested choice with its reason, and the button that takes it over. */
 export function newSuggestion(context: PageContext): {
@@ -42,5 +42,6 @@ export function newSuggestion(context: PageContext): {
 
 /** The reason names the three numbers and their cost. */
 function inWords({ heldOutDb, reason }: NonNullable<ChoiceView['suggestion']>): string {
-  return heldOutDb === null ? reason : `${reason} ${t('Held-out: {0}.', decibels(heldOutDb))}`;
+  const why = phrase(reason);
+  return heldOutDb === null ? why : `${why} ${t('Held-out: {0}.', decibels(heldOutDb))}`;
 }

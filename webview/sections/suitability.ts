@@ -2,15 +2,16 @@ import type { SuitabilityView } from '../../core/protocol/views';
 import type { PageContext, Section } from '../context';
 import { el, whenChanged } from '../elements';
 import { decibels, partsPerMillion, plain } from '../figures';
+import { keepFocus } from '../keepFocus';
 import { newPlot } from '../plots/lines';
 import type { Mark } from '../plots/types';
 import { missingKeys } from '../readable';
 import { allFindings, freshness, viewOf } from '../state';
 import { table } from '../tables';
-import { t } from '../words';
+import { phrase, t } from '../words';
 import { findingList, nothingElse } from './findingList';
 import { newFrame } from './frame';
-import { spectrumCurves } from './spectrumCurves';
+import { signalCurves } from './spectrumCurves';
 
 /** What was found in the recordings, and how much of the desired signal any linear filter could reach. */
 export function newSuitability(context: PageContext): Section {
@@ -40,7 +41,7 @@ export function newSuitability(context: PageContext): Section {
   const show = whenChanged((view: SuitabilityView | null) => {
     const pair = view?.pair ?? null;
     coherence.show(pair?.coherence ? coherenceCurves(pair) : null);
-    spectra.show(pair?.spectrum ? { curves: spectrumCurves(pair.spectrum), marks: unknown(pair) } : null);
+    spectra.show(pair?.spectrum ? { curves: signalCurves(pair.spectrum), marks: unknown(pair) } : null);
     figures.replaceChildren(...(pair === null ? [] : [timingTable(pair)]));
     bands.replaceChildren(...(pair === null ? [] : attainable(pair)));
   });
@@ -49,9 +50,11 @@ export function newSuitability(context: PageContext): Section {
     const all = allFindings(state);
     const checks = viewOf(state, 'suitability')?.checks ?? null;
     const fresh = freshness(state, 'suitability') === 'fresh';
-    findings.replaceChildren(
-      findingList(all, context),
-      fresh && checks !== null ? nothingElse(all, checks) : '',
+    keepFocus(findings, () =>
+      findings.replaceChildren(
+        findingList(all, context),
+        fresh && checks !== null ? nothingElse(all, checks) : '',
+      ),
     );
   });
   return {
@@ -104,7 +107,7 @@ function timingTable(pair: Pair): HTMLElement {
 function attainable(pair: Pair): HTMLElement[] {
   const whole =
     pair.attainableDb === null
-      ? t('Attainable reduction not known: {0}', pair.reason ?? '')
+      ? t('Attainable reduction not known: {0}', phrase(pair.reason ?? ''))
       : t('No linear filter takes off more than {0}.', decibels(pair.attainableDb));
   if (pair.bands.length === 0) return [el('p', {}, whole)];
   const bands = pair.bands.map(({ from, to, attainableDb }) => [

@@ -5,6 +5,7 @@ import { el } from '../elements';
 import type { Field } from '../form/fieldBook';
 import { newTextField } from '../form/textField';
 import { type IntervalKind, intervalRows } from '../intervalEdits';
+import { keepFocus } from '../keepFocus';
 import { addInput, removeInput, removeTake } from '../trackEdits';
 import { t } from '../words';
 import { intervalFields } from './intervalFields';
@@ -21,29 +22,32 @@ export interface TakeForm {
 export function newTakeForm(context: PageContext): TakeForm {
   const element = el('div', { class: 'take' });
   let shape = '';
+  let outline = '';
   let fields: Field[] = [];
   let tracks: TrackField[] = [];
 
   const build = (form: FormView, take: TakeView | null, rate: number | null) => {
     const number = context.take();
-    const focused = fields.findIndex((field) => field.element.contains(document.activeElement));
+    const group = fields.findIndex((field) => field.element.contains(document.activeElement));
     for (const field of fields) context.fields.remove(field);
     tracks = trackFields(form, number, context);
     const intervals = kinds.map((kind) => intervalFields({ take: number, kind }, form, take, rate, context));
     const groups = intervals.map(({ group }) => group);
     const name = nameField(number, context);
     fields = [name, ...tracks, ...groups, ...intervals.flatMap((one) => one.fields)];
-    element.replaceChildren(
-      name.element,
-      ...tracks.map((track, i) => withRemove(track, i, form, context)),
-      ...takeButtons(form, number, context),
-      el('div', { class: 'intervals', 'data-anchor': 'intervals' }, ...groups.map((group) => group.element)),
-    );
-    for (const field of fields) {
-      context.fields.add(field);
-      field.fill(form);
-    }
-    if (focused >= 0) fields[Math.min(focused, fields.length - 1)].focus();
+    const replace = () => {
+      element.replaceChildren(
+        name.element,
+        ...tracks.map((track, i) => withRemove(track, i, form, context)),
+        ...takeButtons(form, number, context),
+        el('div', { class: 'intervals', 'data-anchor': 'intervals' }, ...groups.map((one) => one.element)),
+      );
+      for (const field of fields) {
+        context.fields.add(field);
+        field.fill(form);
+      }
+    };
+    keepFocus(element, replace, () => fields[Math.min(group, fields.length - 1)]?.focus());
   };
 
   return {
@@ -54,17 +58,24 @@ export function newTakeForm(context: PageContext): TakeForm {
       element.hidden = entry === undefined;
       if (entry === undefined) return;
       const rows = kinds.map((kind) => intervalRows(form, { take: number, kind }, take, rate));
-      const next = JSON.stringify([
+      const nextOutline = JSON.stringify([
         number,
         form.document.takes.length,
         entry.inputs.length,
+        rows.map(({ rows: list }) => list.length),
+      ]);
+      const next = JSON.stringify([
+        nextOutline,
         rate,
         kinds.map((kind) => take?.[kind]),
         take?.samples,
         rows.map(({ rows: list, leftOut }) => [leftOut, list.map(({ path, samples }) => [path, samples])]),
       ]);
-      if (next !== shape) {
+      // What is being typed would be lost; the fields are the same, and their next change finds what is new.
+      const typing = nextOutline === outline && fields.some((field) => field.isOpen?.());
+      if (next !== shape && !typing) {
         shape = next;
+        outline = nextOutline;
         build(form, take, rate);
       }
       for (const track of tracks) track.showFiles(files);
@@ -119,7 +130,7 @@ function withRemove(track: TrackField, i: number, form: FormView, context: PageC
 
 function takeButtons(form: FormView, take: number, context: PageContext): HTMLElement[] {
   const add = newButton(t('Add input…'), async () => {
-    const track = await context.calls.pickTrack({ file: null }).catch(context.fail);
+    const track = await context.calls.pickTrack({ file: null, role: 'input' }).catch(context.fail);
     const current = context.state().form;
     if (track && current !== null) context.edit(addInput(current, take, track));
   });

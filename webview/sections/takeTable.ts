@@ -26,5 +26,7 @@ export function takeTable(form: FormView, view: RecordingsView | null, context: 
           : t('{0} s', plain(known.samples / rate, 6));
     return [button, inputs, `${entry.desired.file} · ${entry.desired.channel}`, length];
   });
-  return table(t('Takes'), [t('take'), t('inputs'), t('desired'), t('length')], rows, [3]);
+  const element = table(t('Takes'), [t('take'), t('inputs'), t('desired'), t('length')], rows, [3]);
+  element.classList.add('takes');
+  return element;
 }

@@ -32,10 +32,12 @@ export function newTrackField(
     else show();
   };
   const pick = () =>
-    context.calls.pickTrack({ file: null }).catch((error) => {
-      context.fail(error);
-      return null;
-    });
+    context.calls
+      .pickTrack({ file: null, role: path.includes('inputs') ? 'input' : 'desired' })
+      .catch((error) => {
+        context.fail(error);
+        return null;
+      });
   const show = () => {
     const choices = trackChoices(files, track);
     control.setChoices([
