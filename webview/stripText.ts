@@ -78,7 +78,7 @@ function figures(state: PageState): StripText['figures'] {
   const evidence = viewOf(state, 'evidence');
   if (evidence !== null) {
     const text =
-      evidence.limitDb === null ? t('limit not known') : t('limit {0}', decibels(evidence.limitDb));
+      evidence.limitDb === null ? t('limit not known') : t('limit about {0}', decibels(evidence.limitDb));
     list.push({ text, freshness: freshness(state, 'evidence') });
   }
   const firmware = viewOf(state, 'firmware');

@@ -26,6 +26,13 @@ export function typed(value: number): string {
   return String(Number(value.toPrecision(9)));
 }
 
+/** A number of which only the size matters, to two digits: `84`, `7.9e8`. */
+export function rough(value: number): string {
+  if (!(Math.abs(value) >= 1e4) || !Number.isFinite(value)) return significant(value, 2);
+  const [mantissa, exponent] = value.toExponential(1).split('e');
+  return `${Number(mantissa)}e${Number(exponent)}`;
+}
+
 /** A value to a fixed number of digits after the point, never `-0`. */
 export function fixed(value: number, digits: number): string {
   const text = value.toFixed(digits);

@@ -12,7 +12,7 @@ export const checkSentences = table({
   },
   'not-written': {
     severity: 'blocker',
-    says: 'the files of this pairing were never written, or {file} is gone. Run "tapwright design".',
+    says: 'the files of this pairing were never written, or {file} is gone. Write the files.',
   },
   'not-taps': {
     severity: 'blocker',
@@ -20,23 +20,23 @@ export const checkSentences = table({
   },
   'stale-document': {
     severity: 'blocker',
-    says: 'the document has changed since the files were written. Run "tapwright design".',
+    says: 'the document has changed since the files were written. Write the files again.',
   },
   'stale-recording': {
     severity: 'blocker',
-    says: 'the recording is not the one that the files were made from. Bring it back, or run "tapwright design".',
+    says: 'the recording is not the one that the files were made from. Bring it back, or write the files again.',
   },
   edited: {
     severity: 'blocker',
-    says: 'the file is not as it was written: edited by hand, or from another run. Run "tapwright design" to write it again.',
+    says: 'the file is not as it was written: edited by hand, or from another run. Write the files again.',
   },
   'missing-output': {
     severity: 'blocker',
-    says: 'the file was written with the others and is gone. Run "tapwright design".',
+    says: 'the file was written with the others and is gone. Write the files.',
   },
   different: {
     severity: 'blocker',
-    says: 'solved again, {what} differs from what was written: got {got} when expected {expected}. Run "tapwright design".',
+    says: 'solved again, {what} differs from what was written: got {got} when expected {expected}. Write the files again.',
   },
   'inputs-differ': {
     severity: 'blocker',

@@ -34,6 +34,7 @@ export const placeTemplates = {
   file: '{file}',
   line: 'line {line}',
   take: 'take {take}',
+  named: '{take}',
   channel: 'channel {channel}',
   sample: 'sample {from}',
   samples: 'samples {from} to {to}',
@@ -46,7 +47,8 @@ export function placeParts({ file, line, take, channel, from, to }: Finding): Ph
     parts.push({ template: placeTemplates[kind], values });
   if (file !== undefined) add('file', { file });
   if (line !== undefined) add('line', { line: `${line}` });
-  if (take !== undefined) add('take', { take });
+  // Takes that were not named are called "take 1" and so on.
+  if (take !== undefined) add(take.startsWith('take ') ? 'named' : 'take', { take });
   if (channel !== undefined) add('channel', { channel: shortened(channel) });
   if (from !== undefined && to === undefined) add('sample', { from: `${from}` });
   if (from !== undefined && to !== undefined) add('samples', { from: `${from}`, to: `${to}` });

@@ -2,6 +2,7 @@ import { residualFindings } from '../confidence/residualFindings';
 import { bandFigures } from '../evaluation/bandFigures';
 import { checkLimits } from '../evaluation/limits';
 import type { MeasuredRuns } from '../evaluation/measuredRuns';
+import { rough } from '../figures/numbers';
 import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
 import { overflowFindings } from '../numbers/overflowFindings';
 import { type TargetFilter, targetInput } from '../numbers/targetFilter';
@@ -174,7 +175,7 @@ function proofFindings({ document, takes }: Pairing, { solution }: Fit, heldOut:
     findings.push(
       finding(
         'ill-conditioned',
-        { condition: Number(solution.conditionNumber.toPrecision(2)) },
+        { condition: rough(solution.conditionNumber) },
         { path: ['filter', 'regularisation'] },
       ),
     );

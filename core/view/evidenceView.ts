@@ -6,6 +6,7 @@ import type { DesignResult } from '../pipeline/designResult';
 import type { EvidenceView, FiguresView, SpectrumView } from '../protocol/views';
 import { finiteDecibels, finiteOrNull } from './finiteOrNull';
 import { responseView } from './responseView';
+import { signalName } from './signalName';
 import { decibelsOf } from './suitabilityView';
 
 /** @param figures of the same result */
@@ -44,7 +45,7 @@ export function evidenceView(result: DesignResult, figures: FiguresView): Eviden
     responses: inputs.map((label, r) =>
       responseView(label, coefficients[r], sampleRate, withheld ? null : errors.response.inputs[r]),
     ),
-    residuals: residualRows(result, (label) => label).map(([test, expected, found, probability]) => ({
+    residuals: residualRows(result, signalName).map(([test, expected, found, probability]) => ({
       test,
       expected,
       found,
@@ -66,7 +67,7 @@ function spectrum({ spectra, desired, document }: DesignResult): SpectrumView {
   return {
     frequencies,
     lines: [
-      { label: `desired ${desired}`, role: 'desired', valuesDb: decibelsOf(spectra.desired) },
+      { label: `desired ${signalName(desired)}`, role: 'desired', valuesDb: decibelsOf(spectra.desired) },
       { label: 'output y', role: 'output', valuesDb: decibelsOf(spectra.output) },
       { label: cleaned, role: 'error', valuesDb: decibelsOf(spectra.error) },
     ],

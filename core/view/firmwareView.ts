@@ -8,6 +8,7 @@ import { formatRows } from '../note/sections/numberFormat';
 import type { DesignResult } from '../pipeline/designResult';
 import type { FirmwareView, PlannedFile, Row } from '../protocol/views';
 import { finiteOrNull } from './finiteOrNull';
+import { signalName } from './signalName';
 
 /** Bytes of the preview at most; a filter of thousands of taps need not be shown to its end. */
 const mostPreview = 64 * 1024;
@@ -26,7 +27,7 @@ export function firmwareView(
   const { arithmetic, document, words } = result;
   const cost = filterCost(result);
   return {
-    format: formatRows(result, (label) => label).map(row),
+    format: formatRows(result, signalName).map(row),
     overflow: overflow(result),
     cost: costRows(result).map(row),
     lossDb: finiteOrNull(arithmetic.quantisationLossDb),

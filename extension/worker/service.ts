@@ -16,6 +16,7 @@ import { findingView } from '../../core/view/findingView';
 import { excerptOf } from './excerpt';
 import { hostFiles } from './hostFiles';
 import { envelopeOf } from './lanes';
+import { newPrecedence } from './precedence';
 import type { RootFiles } from './rootFiles';
 import { sameRecordings } from './sameRecordings';
 import { newSession, type Session } from './session';
@@ -38,10 +39,13 @@ export function serve(port: Port, { localFiles, newSha256 }: Surroundings): void
     if (localFiles === null) throw new Error('local files cannot be read here');
     return localFiles(root.folder);
   };
+  const precedence = newPrecedence();
   const sessionOf = (name: string): Session => {
     const known = sessions.get(name);
     if (known !== undefined) return known;
-    const made = newSession(name, openRoot, newSha256, (notice, transfer) => end.tell(notice, transfer));
+    const made = newSession(name, openRoot, newSha256, precedence, (notice, transfer) =>
+      end.tell(notice, transfer),
+    );
     sessions.set(name, made);
     return made;
   };

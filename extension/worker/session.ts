@@ -12,6 +12,7 @@ import { type Packed, pack, samePacked } from '../../core/protocol/pack';
 import type { Part } from '../../core/protocol/views';
 import { recordingView } from '../../core/view/recordingView';
 import { type Computed, compute, type Send } from './computation';
+import type { Precedence } from './precedence';
 import type { RootFiles } from './rootFiles';
 import { newUrgent } from './urgent';
 
@@ -42,17 +43,22 @@ const keptByStage = { fit: 2, blocks: 1, spectra: 2, opened: 64, survey: 64 };
 
 type Report = (what: string, done: number, total: number) => void;
 
+/** Milliseconds after which a session that is held up looks again. */
+const betweenLooks = 30;
+
 /** Milliseconds between two reports of progress. */
 const betweenReports = 100;
 
 /**
  * @param openRoot the files below a root
+ * @param precedence among all sessions of the worker
  * @param tell gets the parts of results and the progress
  */
 export function newSession(
   session: string,
   openRoot: (root: UpdateRequest['root']) => RootFiles,
   newSha256: NewSha256,
+  precedence: Precedence,
   tell: (notice: FromWorker, transfer: ArrayBuffer[]) => void,
 ): Session {
   const keep = newKeep(keptEntries, keptByStage);
@@ -93,7 +99,14 @@ export function newSession(
       await before.catch(() => {});
       if (wanted !== generation) return;
       const opened = await filesOf(root);
-      const pace = newPace(() => stopped || wanted !== generation, report, urgent.drain);
+      const isOver = () => stopped || wanted !== generation;
+      const pace = newPace(isOver, report, async () => {
+        await urgent.drain();
+        while (precedence.isHeldUp(session) && !isOver()) {
+          await new Promise((turn) => setTimeout(turn, betweenLooks));
+          await urgent.drain();
+        }
+      });
       await urgent.begin();
       try {
         await work({ open: opened.open, newSha256, pace, keep });
@@ -121,6 +134,7 @@ export function newSession(
       reported = now;
       busy(what, total > 0 ? Math.min(1, done / total) : 0);
     };
+    precedence.begin(session);
     return queue(request, report, async (host) => {
       try {
         await work(host, sender(generation), (next) => {
@@ -132,6 +146,8 @@ export function newSession(
         if (!(error instanceof Stopped)) throw error;
         if (wanted === generation) tell({ type: 'idle', session, generation, stopped: true }, []);
       }
+    }).finally(() => {
+      if (wanted === generation) precedence.end(session);
     });
   };
 
@@ -189,6 +205,7 @@ export function newSession(
     },
     async close() {
       wanted = -1;
+      precedence.end(session);
       await running.catch(() => {});
       await files?.opened.close();
     },

@@ -1,4 +1,5 @@
 import type { Job } from '../../document/pairingDocument';
+import { rough } from '../../figures/numbers';
 import { type Finding, finding, type Place } from '../../findings/finding';
 import type { Take } from '../../pair/take';
 import { channelLabel } from '../../recordings/recording';
@@ -57,7 +58,7 @@ export function poorExcitation(
 ): Finding[] {
   return emptyBands.flatMap((bands, r) => {
     if (bands.length === 0) return [];
-    const condition = smallest > 0 ? Number((largest / smallest).toPrecision(2)) : 'infinity';
+    const condition = smallest > 0 ? rough(largest / smallest) : 'infinity';
     const values = { bands: bandsInWords(bands), condition };
     return finding('poor-excitation', values, inputPlace(take, r), job === 'identify' ? 'caution' : 'note');
   });

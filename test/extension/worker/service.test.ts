@@ -184,6 +184,17 @@ describe('the worker', () => {
     writeFileSync(path, bytes);
   });
 
+  it('lets the pairing go first that was asked for last', async () => {
+    notices.length = 0;
+    const asked = (session: string) =>
+      call.update({ session, generation: ++generation, root, place, text: text() });
+    await call.forget({ session: 'a' });
+    await Promise.all([asked('behind'), asked('in front')]);
+    const ends = notices.filter(({ type }) => type === 'idle').map(({ session }) => session);
+    expect(ends).toEqual(['in front', 'behind']);
+    await Promise.all(['behind', 'in front'].map((session) => call.forget({ session })));
+  });
+
   it('gives an error back to its caller', async () => {
     await expect(
       call.envelope({ session: 'a', take: 9, lanes: ['desired'], from: 0, to: 10, columns: 10 }),
