@@ -6,11 +6,17 @@ import { counted, grouped, significant } from '../../core/figures/numbers';
 import { visible } from '../../core/figures/visible';
 import type { DesignResult } from '../../core/pipeline/designResult';
 
-/**
- * The result of a design in a few lines for a terminal.
- * @param change against the files that were there; null where there were none or their taps are the same
- */
-export function designSummary(result: DesignResult, change: DesignChange | null): string {
+/** How the taps differ from those that are about to be overwritten, in a few lines for a terminal. */
+export function changeSummary({ documentFile }: DesignResult, change: DesignChange): string {
+  const [taps, effect] = changeInWords(change);
+  return inRows(`${visible(documentFile)}, against what is written`, [
+    ['change', taps],
+    ['', effect],
+  ]);
+}
+
+/** The result of a design in a few lines for a terminal. */
+export function designSummary(result: DesignResult): string {
   const { document, fit, heldOut, arithmetic } = result;
   const { length, delay, regularisation } = document.filter;
   const inputs = result.coefficients.length;
@@ -46,11 +52,11 @@ export function designSummary(result: DesignResult, change: DesignChange | null)
       `overflows: accumulator ${grouped(arithmetic.accumulatorOverflows)}, output ${grouped(arithmetic.outputOverflows)}`,
     ]);
   }
-  if (change !== null) {
-    const [taps, effect] = changeInWords(change);
-    rows.push(['change', taps], ['', effect]);
-  }
   const title = `${visible(document.title)} (${jobWords[document.job]}, ${visible(result.documentFile)})`;
+  return inRows(title, rows);
+}
+
+function inRows(title: string, rows: readonly [string, string][]): string {
   return [title, ...rows.map(([name, text]) => `  ${name.padEnd(9)} ${text}`)].join('\n');
 }
 

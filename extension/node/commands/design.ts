@@ -8,7 +8,7 @@ import { changeAgainst } from '../../../core/pipeline/changeAgainst';
 import { design as runDesign } from '../../../core/pipeline/design';
 import { type Arguments, type Command, exit, rootOption } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
-import { designSummary } from '../summary';
+import { changeSummary, designSummary } from '../summary';
 import { newTerminal, type Terminal } from '../terminal';
 import { openWorkplace } from '../workplace';
 import { writeFiles } from '../writeFiles';
@@ -49,7 +49,7 @@ async function designOne(document: string, given: Arguments, terminal: Terminal)
     const change = await changeAgainst(host, place.folder, files[files.length - 1].path, result);
     const json = given.flag('json');
     // Before anything is overwritten.
-    if (!json) terminal.print(designSummary(result, change));
+    if (!json && change !== null) terminal.print(changeSummary(result, change));
     const written = await writeFiles(root, folder, files);
     if (blocked(written.findings)) return report(terminal, given, document, text, written.findings);
     for (const found of findings) terminal.complain(problemLine(found, document, text));
@@ -58,7 +58,7 @@ async function designOne(document: string, given: Arguments, terminal: Terminal)
       terminal.print(JSON.stringify({ ...resultJson(result), ...changed, written: written.files }, null, 2));
     } else {
       const lines = written.files.map((file) => `  ${file.change.padEnd(9)} ${visible(file.path)}`);
-      terminal.print(lines.join('\n'));
+      terminal.print([designSummary(result), ...lines].join('\n'));
     }
     return findings.some((found) => found.code === 'over-limit') ? exit.failed : exit.ok;
   } finally {
