@@ -5,6 +5,7 @@ import { expect } from 'vitest';
 import { designByCommandLine } from '../support/commandLine';
 import type { Flow } from '../support/flows';
 import { titleOf } from '../support/manifest';
+import { menuClick } from '../support/menuClick';
 import { until } from '../support/until';
 import type { Workbench } from '../support/workbench';
 
@@ -162,8 +163,7 @@ export function besideFlows(flow: Flow): void {
     await row.first().click();
     await workbench.page.keyboard.press('Control+.');
     const fix = workbench.page.locator('.monaco-menu, .action-widget').getByText('Find the Moved Recording');
-    await until('the quick fix', () => fix.first().isVisible());
-    await fix.first().click();
+    await menuClick(fix, 'the quick fix');
     await until('the new name', () =>
       workbench.files.read('belt.pairing.json').includes('moved/belt at 1.csv'),
     );

@@ -1,4 +1,5 @@
 import type { Locator, Page } from 'playwright-core';
+import { menuClick } from './menuClick';
 import { until } from './until';
 
 /** The tree of files at the side. */
@@ -32,8 +33,7 @@ export class Explorer {
     await this.select(names);
     await this.row(names[names.length - 1]).click({ button: 'right' });
     const item = this.page.locator('.monaco-menu').getByRole('menuitem', { name: entry, exact: true });
-    await until(`${entry} in the context menu`, async () => (await item.count()) > 0);
-    await item.first().click();
+    await menuClick(item, entry);
   }
 
   /** Entries of a file's context menu, then closes it. */
