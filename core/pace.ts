@@ -9,17 +9,17 @@ export class Stopped extends Error {
 /** Lets long loops be watched and stopped: they await `step` once a block. */
 export interface Pace {
   /**
-   * Reports progress and, every 30 ms, gives the host a turn.
+   * Reports progress and, every 20 ms, gives the host a turn.
    * @param what the stage in words, for example `statistics`
    * @throws Stopped where the computation was stopped
    */
   step(what: string, done: number, total: number): Promise<void>;
 }
 
-const turn = 30;
+const turn = 20;
 
 /**
- * A pace that yields to the event loop every 30 ms.
+ * A pace that yields to the event loop every 20 ms.
  * @param stopped asked once a step
  * @param report called with every step
  * @param between awaited with every turn: work of others that cannot wait for the end
