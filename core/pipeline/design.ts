@@ -18,7 +18,7 @@ import { inspectPair, type PairInspection } from './inspectPair';
 import { type Measured, measure } from './measure';
 import { type DocumentPlace, type Pairing, type ReadPairing, readPairing } from './pairing';
 import { gainFindings, shapeResult } from './shapeResult';
-import { fitKey, measureKey } from './stageKeys';
+import { confidenceKey, measureKey } from './stageKeys';
 import { studyWords } from './studyWords';
 import { recordingSummaries, takeSummaries } from './summaries';
 import { type Target, toTarget } from './toTarget';
@@ -100,7 +100,7 @@ export async function evaluateDesign(
   const { filter } = fit;
   const { heldOut, proved, runs, evaluation } = measured;
   const shape = await shapeResult(pairing, fit, target.filter, runs, evaluation.total.nmseDb, host.pace);
-  const confidence = await host.keep('confidence', fitKey(pairing), () =>
+  const confidence = await host.keep('confidence', confidenceKey(pairing), () =>
     confidenceOf(pairing, fit, host.pace),
   );
   const summaries = takeSummaries(takes);

@@ -93,7 +93,7 @@ async function openOne(
   const { recording, sha256, findings: found } = await openFile(host, source, resolved, file);
   const findings = found.map((one) => ({ ...one, path }));
   if (recording === null) return { recording, sha256, levels: [], outlines: [], findings };
-  const keptBy = source.stamp === undefined ? null : [resolved, source.stamp];
+  const keptBy = source.stamp === undefined ? null : [resolved, file, source.stamp];
   const survey = await surveyMentioned(host, recording, keptBy, mentions, document);
   return { recording, sha256, ...survey, findings: [...findings, ...survey.findings] };
 }

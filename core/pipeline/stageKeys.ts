@@ -30,6 +30,11 @@ export function fitKey(pairing: Pairing): unknown {
   return [momentsKey(pairing), pairing.document.prepare, pairing.document.filter];
 }
 
+/** How sure the taps are; the tests of the residual are those of the job. */
+export function confidenceKey(pairing: Pairing): unknown {
+  return [fitKey(pairing), pairing.document.job];
+}
+
 /** The figures of the solution over the held-out data, in doubles and in the numbers of the target. */
 export function measureKey(pairing: Pairing): unknown {
   const { job, arithmetic } = pairing.document;
