@@ -1,3 +1,4 @@
+import { decibels as plainDecibels, powerDecibels } from '../core/figures/decibels';
 import { fixed, grouped, noFigure, significant } from '../core/figures/numbers';
 import { t } from './words';
 
@@ -7,9 +8,7 @@ const minus = (text: string) => text.replace('-', '−');
 
 /** `−23.4 dB`. */
 export function decibels(value: number | null, digits = 1): string {
-  if (value === null || Number.isNaN(value)) return noFigure;
-  if (!Number.isFinite(value)) return value > 0 ? '∞ dB' : '−∞ dB';
-  return `${minus(fixed(value, digits))} dB`;
+  return minus(plainDecibels(value, digits));
 }
 
 /** `−23.4 ± 0.3 dB`. */
@@ -20,7 +19,7 @@ export function decibelsWithError(value: number | null, error: number | null, di
 
 /** A regularisation in decibels; 0 has none. */
 export function regularisationDb(value: number): string {
-  return value > 0 ? decibels(10 * Math.log10(value)) : t('none');
+  return value > 0 ? decibels(powerDecibels(value)) : t('none');
 }
 
 /** A value with four digits, a true minus sign. */

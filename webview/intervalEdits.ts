@@ -1,5 +1,5 @@
 import type { IntervalEntry } from '../core/document/pairingDocument';
-import type { Interval } from '../core/pair/intervals';
+import { type Interval, wholeSample } from '../core/pair/intervals';
 import type { Change } from '../core/protocol/messages';
 import type { FormView, TakeView } from '../core/protocol/views';
 import { type Path, pathKey } from './paths';
@@ -120,7 +120,7 @@ export function secondsOf(samples: number, sampleRate: number): number {
   const seconds = samples / sampleRate;
   for (let digits = 0; digits <= 15; digits++) {
     const short = Number(seconds.toFixed(digits));
-    if (Math.floor(short * sampleRate + 0.5) === samples) return short;
+    if (wholeSample(short, sampleRate) === samples) return short;
   }
   return seconds;
 }
@@ -128,7 +128,7 @@ export function secondsOf(samples: number, sampleRate: number): number {
 /** An entry in whole samples, as the design rounds it. */
 export function samplesOf(entry: IntervalEntry, sampleRate: number | null): Interval {
   const scale = entry.samples || sampleRate === null ? 1 : sampleRate;
-  return { from: Math.floor(entry.from * scale + 0.5), to: Math.floor(entry.to * scale + 0.5) };
+  return { from: wholeSample(entry.from, scale), to: wholeSample(entry.to, scale) };
 }
 
 function entryOf({ from, to }: Interval, sampleRate: number | null): IntervalEntry {

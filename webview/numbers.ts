@@ -1,3 +1,4 @@
+import { count } from './figures';
 import { t } from './words';
 
 /** What a number field takes. */
@@ -70,9 +71,5 @@ export function fieldText(value: number | null): string {
 }
 
 function shown(value: number): string {
-  return Number.isInteger(value) && Math.abs(value) < 1e7
-    ? String(value)
-        .replace(/\B(?=(\d{3})+$)/g, ',')
-        .replace('-', '−')
-    : fieldText(value);
+  return Number.isInteger(value) && Math.abs(value) < 1e7 ? count(value) : fieldText(value);
 }

@@ -38,6 +38,9 @@ export interface Statistics {
   folds: { training: JointSums; blocks: JointSums[] }[];
 }
 
+/** What is summed together, of {@link Folds}. */
+export type Cuts = Pick<Folds, 'all' | 'folds'>;
+
 /** Samples of history that the sums hold, and one more. */
 function reachOf({ length, delays }: Layout): number {
   return Math.max(length, delays[delays.length - 1] - delays[0] + 1);
@@ -50,7 +53,7 @@ function reachOf({ length, delays }: Layout): number {
  */
 export async function gatherStatistics(
   takes: readonly Take[],
-  folds: Folds,
+  folds: Cuts,
   layout: Layout,
   moments: Moments,
   pace: Pace,
@@ -101,7 +104,7 @@ function inputFloor(raw: JointSums): JointSums {
 }
 
 /** Runs of n between neighbouring cuts. */
-function piecesOf({ take, intervals }: Part, { folds }: Folds): Interval[] {
+function piecesOf({ take, intervals }: Part, { folds }: Cuts): Interval[] {
   const cuts = folds
     .flatMap(({ training, blocks }) => [...training, ...blocks])
     .filter((part) => part.take === take)

@@ -1,3 +1,4 @@
+import { inner } from '../solvers/vectors';
 import type { JointSums, Layout } from './blockSums';
 import type { Centre } from './grid';
 import { crossSums, desiredEnergies, inputSums } from './jointParts';
@@ -33,8 +34,8 @@ export function errorsOfOne(
       const desired = desiredEnergies(sums, own)[last];
       const output = new Float64Array(1);
       outputEnergy(inputSums(sums, own))([row], length, output);
-      let product = 0;
-      for (let i = 0; i < length * layout.inputs; i++) product += row[i] * cross[i];
+      const unknowns = length * layout.inputs;
+      const product = inner(row.subarray(0, unknowns), cross);
       return { error: Math.max(0, desired - 2 * product + output[0]), desired };
     });
   }

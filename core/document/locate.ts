@@ -33,7 +33,8 @@ export function locateFinding(text: string, { values, path }: Finding): Position
   return typeof line === 'number' && typeof column === 'number' ? { line, column } : locate(text, path ?? []);
 }
 
-function childOf(node: Node, key: string | number): Node | undefined {
+/** The value that a key of a parsed text leads to; undefined where there is none. */
+export function childOf(node: Node, key: string | number): Node | undefined {
   if (node.type === 'array') return typeof key === 'number' ? node.children?.[key] : undefined;
   if (node.type !== 'object') return undefined;
   return node.children?.find((property) => property.children?.[0].value === key)?.children?.[1];

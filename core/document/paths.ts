@@ -16,6 +16,11 @@ export function pathFault(path: string, kind: 'file' | 'folder'): PathFault | nu
   return kind === 'file' && /(^|\/)\.{0,2}$/.test(path) ? 'folder' : null;
 }
 
+/** The path of a file in a folder; '' is the root itself. */
+export function pathIn(folder: string, file: string): string {
+  return folder === '' ? file : `${folder}/${file}`;
+}
+
 /**
  * The path from the root of what the document names, without `.`, `..` and doubled slashes; '' for the root itself.
  * Null where it leaves the root on its way, even if it would come back, or is no relative path at all.

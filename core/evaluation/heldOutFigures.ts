@@ -1,6 +1,6 @@
 import { type TargetFilter, targetSimulator } from '../numbers/targetFilter';
 import type { Pace } from '../pace';
-import { newWelch, type Welch } from '../spectra/welch';
+import { newWelch, type Welch, welchSegment } from '../spectra/welch';
 import { countsReader } from './countsReader';
 import { blockCount, type ErrorTally, newErrorTally, relativeStandardError } from './errorTally';
 import { type Filter, filterLength } from './filter';
@@ -39,6 +39,9 @@ export interface Evaluation {
   target: TargetFigures;
 }
 
+/** Of the spectra, where there are samples enough. */
+const longestSegment = 2048;
+
 /**
  * Filters the runs, as computed in doubles and as the target computes it, and takes all figures in one go.
  * @param sampleRate in Hz
@@ -50,7 +53,8 @@ export async function evaluate(
   sampleRate: number,
   pace: Pace,
 ): Promise<Evaluation> {
-  const segment = welchSegment(runs);
+  const samples = runs.reduce((sum, run) => sum + run.samples, 0);
+  const segment = welchSegment(samples, longestSegment);
   const welch = newWelch(3, segment, sampleRate);
   const targetTally = newTargetTally();
   const outside = newErrorTally(1, 1);
@@ -64,7 +68,6 @@ export async function evaluate(
     errorEnergy += tally.errorEnergy;
     desiredEnergy += tally.desiredEnergy;
   }
-  const samples = runs.reduce((sum, run) => sum + run.samples, 0);
   const total = errorFigure(samples, errorEnergy, desiredEnergy);
   const [desired, output, error] = welch.densities();
   const frequencies = desired.map((_, f) => (f * sampleRate) / segment);
@@ -128,12 +131,4 @@ function takeFigure(tally: ErrorTally): ErrorFigure & { standardErrorDb: number 
     // To first order: d(10 log10 r) = (10 / ln 10) dr / r.
     standardErrorDb: relative === null ? null : 4.342944819032518 * relative,
   };
-}
-
-/** A power of two: a sixteenth of the samples at most, so that there is something to average, and 64 to 2,048. */
-function welchSegment(runs: readonly Run[]): number {
-  const samples = runs.reduce((sum, run) => sum + run.samples, 0);
-  let segment = 64;
-  while (segment < 2048 && 32 * segment <= samples) segment *= 2;
-  return segment;
 }

@@ -28,7 +28,7 @@ export interface MeasuredRuns {
 export function heldOutRuns(takes: readonly Take[], job: Job, filter: Filter): MeasuredRuns {
   const all = runsOver(takes, (take) => take.heldOut, filter);
   if (job !== 'cancel') return { runs: all, disturbanceOnly: false, leftOut: [] };
-  const bare = runsOver(takes, (take) => intersect(take.heldOut, take.disturbanceOnly), filter);
+  const bare = runsOver(takes, bareHeldOut, filter);
   if (bare.length === 0) return { runs: all, disturbanceOnly: false, leftOut: [] };
   const measured = new Set(bare.map((run) => run.take));
   return {
@@ -38,10 +38,15 @@ export function heldOutRuns(takes: readonly Take[], job: Job, filter: Filter): M
   };
 }
 
-/** The same as intervals, whatever the filter. */
+/** The held-out part that is known to be without the wanted signal. */
+export function bareHeldOut({ heldOut, disturbanceOnly }: Take): Interval[] {
+  return intersect(heldOut, disturbanceOnly);
+}
+
+/** Where {@link heldOutRuns} are taken, as intervals, whatever the filter. */
 export function heldOutIntervals(takes: readonly Take[], job: Job): (take: Take) => Interval[] {
-  const bare = (take: Take) => intersect(take.heldOut, take.disturbanceOnly);
-  return job === 'cancel' && takes.some((take) => bare(take).length > 0) ? bare : (take) => take.heldOut;
+  const hasBare = takes.some((take) => bareHeldOut(take).length > 0);
+  return job === 'cancel' && hasBare ? bareHeldOut : (take) => take.heldOut;
 }
 
 /** The usable n of some intervals of each take; takes with none are left out. */

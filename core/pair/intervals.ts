@@ -4,6 +4,14 @@ export interface Interval {
   to: number;
 }
 
+/**
+ * A moment in whole samples: the nearest one.
+ * @param scale samples in the unit of the moment: the rate for seconds, 1 for samples
+ */
+export function wholeSample(moment: number, scale: number): number {
+  return Math.floor(moment * scale + 0.5);
+}
+
 /** Samples in a list of intervals that do not overlap. */
 export function totalLength(intervals: readonly Interval[]): number {
   return intervals.reduce((sum, { from, to }) => sum + (to - from), 0);

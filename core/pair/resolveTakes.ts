@@ -2,7 +2,7 @@ import type { IntervalEntry, PairingDocument, TakeEntry, TrackEntry } from '../d
 import { type Finding, finding } from '../findings/finding';
 import { channelMissing, findChannel } from '../recordings/findChannel';
 import type { Recording } from '../recordings/recording';
-import { complement, firstOverlap, type Interval } from './intervals';
+import { complement, firstOverlap, type Interval, wholeSample } from './intervals';
 import { inputSamples, type Take, type Track } from './take';
 
 export interface ResolvedTakes {
@@ -148,8 +148,8 @@ function resolveIntervals(
   const intervals: Interval[] = [];
   entries.forEach((entry, i) => {
     const scale = entry.samples ? 1 : sampleRate;
-    const from = Math.floor(entry.from * scale + 0.5);
-    const to = Math.floor(entry.to * scale + 0.5);
+    const from = wholeSample(entry.from, scale);
+    const to = wholeSample(entry.to, scale);
     const where = { take, path: entries.length > 1 ? [...path, i] : path };
     if (to <= from) {
       findings.push(finding('interval-empty', { from, to }, where));

@@ -31,7 +31,7 @@ export interface Designed {
 
 /** Told as the stages come, for those who show them one by one. */
 export interface DesignWatch {
-  read?(read: ReadPairing): void | Promise<void>;
+  read?(read: ReadPairing): void;
   measured?(pairing: Pairing, fit: Fit, measured: Measured): void;
   inspected?(inspection: PairInspection): void;
 }
@@ -60,7 +60,7 @@ export async function design(
   try {
     const read = await readPairing(host, text, place);
     findings.push(...read.findings);
-    await watch.read?.(read);
+    watch.read?.(read);
     if (read.pairing === null) return { result: null, findings: worstFirst(findings) };
     const { pairing } = read;
     const fit = await fitPair(pairing, host);

@@ -1,17 +1,17 @@
 import { gatherStatistics, type Layout, type Statistics } from '../choice/blockSums';
-import { type Folds, type Part, samplesOf } from '../choice/folds';
+import type { Part } from '../choice/folds';
 import { type Energies, errorsOfOne } from '../choice/oneFit';
 import { heldOutIntervals } from '../evaluation/measuredRuns';
 import { powerDecibels } from '../figures/decibels';
 import { type Interval, intersect } from '../pair/intervals';
-import type { Moments } from '../pair/moments';
 import type { Take } from '../pair/take';
 import { usedSegments } from '../pair/usedSegments';
+import { sizeFor } from '../statistics/transform';
 import { bandOf } from './askedBand';
 import type { Work } from './host';
 import { momentsOf } from './momentsOf';
 import type { Pairing } from './pairing';
-import { momentsKey } from './stageKeys';
+import { measuredKey, momentsKey } from './stageKeys';
 
 /**
  * Sums of the fit and of the held-out data for every length and delay around the present ones, so that the figures of a
@@ -22,7 +22,6 @@ export interface QuickStatistics {
   key: string;
   layout: Layout;
   statistics: Statistics;
-  moments: Moments;
   /** Blocks of the held-out data; those of the fit follow them. */
   heldOut: number;
 }
@@ -49,8 +48,7 @@ function layoutFor(pairing: Pairing): (Layout & { history: number }) | null {
   const { length, delay, windowing, symmetry, fixedGain } = document.filter;
   if (windowing !== 'covariance' || symmetry !== 'none' || fixedGain !== null) return null;
   const inputs = takes[0].inputs.length;
-  let longest = leastLength;
-  while (longest < 2 * length) longest *= 2;
+  let longest = sizeFor(2 * length, leastLength);
   while (longest * inputs > mostUnknowns && longest >= 2 * length) longest /= 2;
   if (longest < length || longest * inputs > mostUnknowns) return null;
   const first = delayStep * Math.floor(delay / delayStep) - delayStep / 2;
@@ -60,9 +58,8 @@ function layoutFor(pairing: Pairing): (Layout & { history: number }) | null {
 
 function keyOf(pairing: Pairing, layout: Layout): string {
   const { job, prepare } = pairing.document;
-  const intervals = pairing.takes.map(({ heldOut, disturbanceOnly }) => [heldOut, disturbanceOnly]);
   const { length, delays } = layout;
-  return JSON.stringify([momentsKey(pairing), job, prepare, intervals, length, delays[0]]);
+  return JSON.stringify([momentsKey(pairing), job, prepare, measuredKey(pairing), length, delays[0]]);
 }
 
 /**
@@ -89,17 +86,12 @@ export async function prepareQuick(
   const training = parts((take) => take.fit);
   const heldOut = parts(heldOutIntervals(takes, document.job));
   if (training.length === 0 || heldOut.length === 0) return null;
-  const folds: Folds = {
+  const folds = {
     all: [...training, ...heldOut],
     folds: [{ training, blocks: [...heldOut, ...training] }],
-    gap: 0,
-    by: 'blocks',
-    blocks: heldOut.length + training.length,
-    samples: samplesOf(heldOut),
-    leastTraining: samplesOf(training),
   };
   const statistics = await gatherStatistics(takes, folds, layout, moments, work.pace, bandOf(pairing));
-  return { key, layout, statistics, moments, heldOut: heldOut.length };
+  return { key, layout, statistics, heldOut: heldOut.length };
 }
 
 /** The figures of the present filter; null where the statistics are of something else or the fit cannot be solved. */

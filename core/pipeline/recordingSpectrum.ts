@@ -1,6 +1,6 @@
 import type { Pace } from '../pace';
 import type { Recording } from '../recordings/recording';
-import { newWelch } from '../spectra/welch';
+import { newWelch, welchSegment } from '../spectra/welch';
 import { spreadOver } from '../suitability/pair/gatherSpectra';
 
 /** Power spectral densities of the channels of a recording, in unit²/Hz. */
@@ -17,14 +17,16 @@ const mostChannels = 8;
 /** Samples of each channel at most, spread over the recording: a spectrum of them takes about a second. */
 const mostSamples = 1 << 22;
 
+/** Of the spectrum, where there are samples enough. */
+const longestSegment = 4096;
+
 const block = 65536;
 
 /** Means are left in. Blocks with a sample that is no number are left out; null where no segment could be averaged. */
 export async function recordingSpectrum(recording: Recording, pace: Pace): Promise<RecordingSpectrum | null> {
   const channels = recording.channels.map((_, c) => c).slice(0, mostChannels);
   const rate = recording.sampleRate ?? 1;
-  let segment = 64;
-  while (segment < 4096 && 32 * segment <= recording.samples) segment *= 2;
+  const segment = welchSegment(recording.samples, longestSegment);
   const welch = newWelch(channels.length, segment, rate);
   for (const { from, to } of spreadOver([{ from: 0, to: recording.samples }], mostSamples)) {
     welch.gap();

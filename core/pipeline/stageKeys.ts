@@ -1,4 +1,3 @@
-import type { Interval } from '../pair/intervals';
 import type { Track } from '../pair/take';
 import type { Pairing } from './pairing';
 
@@ -16,7 +15,8 @@ function signals({ takes, recordings, sampleRate }: Pairing): unknown {
 
 /** The means and powers. */
 export function momentsKey(pairing: Pairing): unknown {
-  return [signals(pairing), intervalsOf(pairing, 'fit'), pairing.document.prepare.removeMean];
+  const fits = pairing.takes.map(({ fit }) => fit);
+  return [signals(pairing), fits, pairing.document.prepare.removeMean];
 }
 
 /** The sums of the normal equations. */
@@ -38,27 +38,16 @@ export function confidenceKey(pairing: Pairing): unknown {
 /** The figures of the solution over the held-out data, in doubles and in the numbers of the target. */
 export function measureKey(pairing: Pairing): unknown {
   const { job, arithmetic } = pairing.document;
-  return [
-    fitKey(pairing),
-    arithmetic,
-    job,
-    intervalsOf(pairing, 'heldOut'),
-    intervalsOf(pairing, 'disturbanceOnly'),
-  ];
+  return [fitKey(pairing), arithmetic, job, measuredKey(pairing)];
 }
 
 /** The inspection of the pair. */
 export function inspectionKey(pairing: Pairing): unknown {
   const { job, takes } = pairing.document;
-  return [
-    fitKey(pairing),
-    job,
-    takes,
-    intervalsOf(pairing, 'heldOut'),
-    intervalsOf(pairing, 'disturbanceOnly'),
-  ];
+  return [fitKey(pairing), job, takes, measuredKey(pairing)];
 }
 
-function intervalsOf({ takes }: Pairing, key: 'fit' | 'heldOut' | 'disturbanceOnly'): Interval[][] {
-  return takes.map((take) => take[key]);
+/** Where figures are taken. */
+export function measuredKey({ takes }: Pairing): unknown {
+  return takes.map(({ heldOut, disturbanceOnly }) => [heldOut, disturbanceOnly]);
 }

@@ -1,6 +1,6 @@
 import { digestSource } from '../bytes/digest';
 import type { PairingDocument } from '../document/pairingDocument';
-import { resolveInside } from '../document/paths';
+import { pathIn, resolveInside } from '../document/paths';
 import { documentStem } from '../files/documentStem';
 import { readTaps, type TapsFile } from '../files/readTaps';
 import { selfDigestHolds } from '../files/selfDigest';
@@ -32,7 +32,7 @@ export async function readWritten(
   place: DocumentPlace,
 ): Promise<WrittenFiles> {
   const name = `${documentStem(place.file)}.taps.json`;
-  const within = (path: string) => (document.write.folder === '' ? path : `${document.write.folder}/${path}`);
+  const within = (path: string) => pathIn(document.write.folder, path);
   const file = within(name);
   const text = await readText(host, place.folder, file);
   if (text === null) {

@@ -2,7 +2,7 @@ import type { ByteSource } from '../bytes/byteSource';
 import { sha256OfText } from '../bytes/sha256';
 import { documentMeaning } from '../document/canonicalJson';
 import type { PairingDocument } from '../document/pairingDocument';
-import { resolveInside } from '../document/paths';
+import { pathIn, resolveInside } from '../document/paths';
 import { readDocument } from '../document/readDocument';
 import { blocked, type Finding, finding, Refusal, worstFirst } from '../findings/finding';
 import type { FindingCode } from '../findings/sentences';
@@ -102,7 +102,7 @@ function stampOf(source: ByteSource | OpenFailure): string {
 }
 
 async function documentText(host: Host, { folder, file }: DocumentPlace): Promise<string> {
-  const source = await host.open(folder === '' ? file : `${folder}/${file}`);
+  const source = await host.open(pathIn(folder, file));
   if (typeof source === 'string') throw new Refusal([finding(failureCodes[source], {}, { file })]);
   return new TextDecoder().decode(await source.read(0, source.size));
 }

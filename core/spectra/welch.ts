@@ -17,6 +17,16 @@ export interface Welch {
 }
 
 /**
+ * Samples of a segment: a power of two, a sixteenth of the samples at most, so that there is something to average.
+ * @param most a power of two, 64 or more; no segment is shorter than 64
+ */
+export function welchSegment(samples: number, most: number): number {
+  let segment = 64;
+  while (segment < most && 32 * segment <= samples) segment *= 2;
+  return segment;
+}
+
+/**
  * @param count number of signals
  * @param segment samples of a segment, a power of two, 4 or more
  * @param sampleRate in Hz

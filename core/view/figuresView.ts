@@ -1,4 +1,4 @@
-import { intersect } from '../pair/intervals';
+import { bareHeldOut } from '../evaluation/measuredRuns';
 import type { Fit } from '../pipeline/fitPair';
 import type { Measured } from '../pipeline/measure';
 import type { Pairing } from '../pipeline/pairing';
@@ -8,7 +8,7 @@ import { finiteDecibels, finiteOrNull } from './finiteOrNull';
 
 /** The same before the filter has been run. */
 export function quickView({ document, takes }: Pairing, quick: QuickFigures): FiguresView {
-  const bare = takes.some((take) => intersect(take.heldOut, take.disturbanceOnly).length > 0);
+  const bare = takes.some((take) => bareHeldOut(take).length > 0);
   return {
     ...quick,
     fitDb: finiteDecibels(quick.fitDb),

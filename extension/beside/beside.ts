@@ -1,7 +1,8 @@
 import * as vscode from 'vscode';
+import { pathIn } from '../../core/document/paths';
 import type { FindingView } from '../../core/protocol/views';
 import { spotOf } from '../editors/spot';
-import { nameOf, pathBelow } from '../files/relativePath';
+import { folderOf, nameOf, pathBelow } from '../files/relativePath';
 import type { Services } from '../services';
 import { Lookout, type Memory, memoryOf } from './lookout';
 import { PairingIndex } from './pairingIndex';
@@ -117,7 +118,7 @@ export class Beside {
     const document = uri.toString();
     if (address === null || this.index.get(document) !== undefined) return;
     const file = nameOf(address.path);
-    const folder = address.path.slice(0, Math.max(0, address.path.length - file.length - 1));
+    const folder = folderOf(address.path);
     const view = Object.hasOwn(known, document) ? known[document] : null;
     const entry: Entry = { document, root: address.root, folder, file, view, checked: null };
     this.index.put(entry);
@@ -133,7 +134,7 @@ export class Beside {
 
   private looked(entry: Entry, changed: boolean): void {
     if (!changed) return;
-    const path = entry.folder === '' ? entry.file : `${entry.folder}/${entry.file}`;
+    const path = pathIn(entry.folder, entry.file);
     if (entry.view?.seen.stamps[path] === 'missing') this.forget(entry.document);
     else this.changes.fire(entry);
     clearTimeout(this.keepTimer);

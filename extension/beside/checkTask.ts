@@ -1,4 +1,5 @@
 import * as vscode from 'vscode';
+import { pathIn } from '../../core/document/paths';
 import type { Services } from '../services';
 import type { Beside } from './beside';
 import { checkPairing } from './checkPairing';
@@ -91,7 +92,7 @@ class CheckTerminal implements vscode.Pseudoterminal {
       .map(({ document, root, folder: inside, file }) => ({
         document: vscode.Uri.parse(document),
         root,
-        path: inside === '' ? file : `${inside}/${file}`,
+        path: pathIn(inside, file),
       }))
       .filter(({ root, path }) => (folder === null || root === folder) && (this.wanted ?? path) === path)
       .sort((a, b) => (a.path < b.path ? -1 : 1));

@@ -1,3 +1,4 @@
+import { pathIn } from '../../core/document/paths';
 import type { Entry } from './standing';
 
 /** The pairings of the workspace, found by what hangs together with them. Paths are from a root. */
@@ -69,10 +70,7 @@ function mapsOf(entries: Iterable<Entry>): Maps {
   const maps: Maps = { symbols: new Map(), outputs: new Map(), files: new Map() };
   for (const entry of entries) {
     const { root, folder, file, view } = entry;
-    const looked = new Set([
-      folder === '' ? file : `${folder}/${file}`,
-      ...Object.keys(view?.seen.stamps ?? {}),
-    ]);
+    const looked = new Set([pathIn(folder, file), ...Object.keys(view?.seen.stamps ?? {})]);
     for (const path of looked) push(maps.files, keyOf(root, path), entry);
     if (view === null || view.symbol === null) continue;
     push(maps.symbols, view.symbol, entry);

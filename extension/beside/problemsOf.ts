@@ -1,4 +1,4 @@
-import { resolveInside } from '../../core/document/paths';
+import { pathIn, resolveInside } from '../../core/document/paths';
 import { visible } from '../../core/figures/visible';
 import { type Dictionary, translatedText } from '../../core/findings/translate';
 import { translatedPhrase } from '../../core/findings/translatePhrase';
@@ -83,7 +83,7 @@ function ofDocument(
   view: View,
   dictionary: Dictionary,
 ): Problem[] {
-  const path = folder === '' ? file : `${folder}/${file}`;
+  const path = pathIn(folder, file);
   const known = new Set<string>();
   const problems: Problem[] = [];
   for (const found of [...view.findings, ...(checked ?? [])]) {

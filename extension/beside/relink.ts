@@ -72,7 +72,8 @@ async function recordingsBelow(folder: vscode.Uri, missing: string): Promise<str
   for (const one of endings) {
     const pattern = new vscode.RelativePattern(folder, `**/*${one}`);
     for (const uri of await vscode.workspace.findFiles(pattern, passedOver)) {
-      found.push(...(pathBelow(folder.path, uri.path) ? [pathBelow(folder.path, uri.path)!] : []));
+      const path = pathBelow(folder.path, uri.path);
+      if (path) found.push(path);
     }
   }
   return found;

@@ -2,6 +2,7 @@ import * as vscode from 'vscode';
 import type { RecordingHead } from '../../core/protocol/messages';
 import { fromRoot, type Spot } from '../editors/spot';
 import { listRecordings } from '../files/listRecordings';
+import { recordingEndings } from '../files/recordingNames';
 import { nameOf } from '../files/relativePath';
 
 interface FileItem extends vscode.QuickPickItem {
@@ -46,7 +47,7 @@ async function pickElsewhere(spot: Spot, title: string): Promise<string | null> 
     (await vscode.window.showOpenDialog({
       title,
       defaultUri: spot.folderUri,
-      filters: { [vscode.l10n.t('Recordings')]: ['wav', 'csv', 'tsv', 'npy'] },
+      filters: { [vscode.l10n.t('Recordings')]: recordingEndings.map((ending) => ending.slice(1)) },
     })) ?? [];
   if (uri === undefined) return null;
   const path = fromRoot(spot, uri);

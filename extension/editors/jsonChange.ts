@@ -1,4 +1,5 @@
 import { getNodeValue, type Node, parseTree } from 'jsonc-parser';
+import { childOf } from '../../core/document/locate';
 import type { Change } from '../../core/protocol/messages';
 import { rendered, type TextStyle } from './textStyle';
 
@@ -90,12 +91,6 @@ function ownLine(text: string, offset: number): string | null {
   const start = Math.max(text.lastIndexOf('\n', offset - 1), text.lastIndexOf('\r', offset - 1)) + 1;
   const before = text.slice(start, offset);
   return start > 0 && /^[ \t]*$/.test(before) ? before : null;
-}
-
-function childOf(node: Node, key: string | number): Node | undefined {
-  if (node.type === 'array') return typeof key === 'number' ? node.children?.[key] : undefined;
-  if (node.type !== 'object') return undefined;
-  return node.children?.find((property) => property.children?.[0].value === key)?.children?.[1];
 }
 
 function same(a: unknown, b: unknown): boolean {

@@ -49,6 +49,12 @@ export function openPage(
   });
 }
 
+/** Runs a command of the workbench for a page. */
+export async function runCommand(name: string, ...parameters: unknown[]): Promise<null> {
+  await vscode.commands.executeCommand(name, ...parameters);
+  return null;
+}
+
 /** The first that a page hears. */
 export function hello(kind: 'pairing' | 'recording', file: string): ToPage {
   return {

@@ -1,10 +1,10 @@
-import * as vscode from 'vscode';
+import type * as vscode from 'vscode';
 import { openFromDocument } from '../commands/openFromDocument';
 import { openAsText } from '../commands/openViews';
 import { pickTrack } from '../commands/pickTrack';
 import type { Services } from '../services';
 import type { OpenPairings } from './openPairings';
-import { openPage } from './page';
+import { openPage, runCommand } from './page';
 
 export const pairingView = 'tapwright.pairing';
 
@@ -43,15 +43,10 @@ export class PairingEditor implements vscode.CustomTextEditorProvider {
         openAsText: (position) => openAsText(document.uri, position),
         openFile: (file) => openFromDocument(pairing.spot, file, pairing.isRecording(file)),
         pickTrack: ({ file, role }) => pickTrack(this.services, pairing.spot, file, role),
-        pairWith: () => command('tapwright.pairRecordings'),
-        openSampleBench: () => command('tapwright.openSampleBench'),
-        manageTrust: () => command('workbench.trust.manage'),
+        pairWith: () => runCommand('tapwright.pairRecordings'),
+        openSampleBench: () => runCommand('tapwright.openSampleBench'),
+        manageTrust: () => runCommand('workbench.trust.manage'),
       };
     });
   }
-}
-
-async function command(name: string): Promise<null> {
-  await vscode.commands.executeCommand(name);
-  return null;
 }

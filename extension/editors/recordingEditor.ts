@@ -1,8 +1,9 @@
 import * as vscode from 'vscode';
+import { pathIn } from '../../core/document/paths';
 import type { PageCalls } from '../../core/protocol/messages';
 import type { Services } from '../services';
 import { type HostSession, newHostSession } from './hostSession';
-import { hello, openPage } from './page';
+import { hello, openPage, runCommand } from './page';
 import { type Spot, spotOf } from './spot';
 
 /** Default for files that no other editor shows, and a choice for those that have editors of their own. */
@@ -20,7 +21,7 @@ class OpenRecording implements vscode.CustomDocument {
   ) {
     this.spot = spotOf(uri, services.platform);
     const { root, folder, file } = this.spot;
-    const path = folder === '' ? file : `${folder}/${file}`;
+    const path = pathIn(folder, file);
     this.host = newHostSession(services, file, (session, generation) =>
       services.worker.call.inspect({ session, generation, root, path, file }),
     );
@@ -73,9 +74,9 @@ export class RecordingEditor implements vscode.CustomReadonlyEditorProvider<Open
           return null;
         },
         stop: () => worker.call.stop({ session }),
-        pairWith: () => command('tapwright.pairRecordings', uri),
-        openSampleBench: () => command('tapwright.openSampleBench'),
-        manageTrust: () => command('workbench.trust.manage'),
+        pairWith: () => runCommand('tapwright.pairRecordings', uri),
+        openSampleBench: () => runCommand('tapwright.openSampleBench'),
+        manageTrust: () => runCommand('workbench.trust.manage'),
         ...pairingsOnly,
       };
     });
@@ -94,8 +95,3 @@ const pairingsOnly: Pick<PageCalls, 'edit' | 'write' | 'check' | 'openAsText' | 
   openFile: notHere,
   pickTrack: notHere,
 };
-
-async function command(name: string, ...parameters: unknown[]): Promise<null> {
-  await vscode.commands.executeCommand(name, ...parameters);
-  return null;
-}

@@ -1,7 +1,7 @@
 import type { PairingDocument } from '../../core/document/pairingDocument';
 import { resolveInside } from '../../core/document/paths';
 import { documentStem } from '../../core/files/documentStem';
-import { nameOf } from '../files/relativePath';
+import { folderOf, nameOf } from '../files/relativePath';
 
 /** In a folder, from the root: files by name and by how names start. */
 export interface WatchedFolder {
@@ -25,7 +25,7 @@ export function watchedFiles(document: PairingDocument, folder: string, file: st
   const tracks = document.takes.flatMap(({ inputs, desired }) => [...inputs, desired]);
   for (const named of new Set(tracks.map((track) => track.file))) {
     const path = resolveInside(folder, named);
-    if (path !== null) at(path.slice(0, Math.max(0, path.lastIndexOf('/')))).files.push(nameOf(path));
+    if (path !== null) at(folderOf(path)).files.push(nameOf(path));
   }
   const written = resolveInside(folder, document.write.folder);
   const stem = documentStem(file);

@@ -1,3 +1,5 @@
+import { pathIn } from '../../core/document/paths';
+
 /** What the workbench's file systems tell of an entry; the numbers are those of `vscode.FileType`. */
 export const fileTypes = { file: 1, folder: 2, link: 64 } as const;
 
@@ -25,7 +27,7 @@ export async function leadsOverLink(list: List, path: string): Promise<boolean> 
       worst(entries.filter(([entryName]) => folded(entryName) === folded(name)));
     if (entry === undefined) return false;
     if ((entry[1] & fileTypes.link) !== 0) return true;
-    folder = folder === '' ? entry[0] : `${folder}/${entry[0]}`;
+    folder = pathIn(folder, entry[0]);
   }
   return false;
 }

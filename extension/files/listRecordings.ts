@@ -1,3 +1,4 @@
+import { pathIn } from '../../core/document/paths';
 import { fileTypes, type List } from './linkCheck';
 import { isRecording } from './recordingNames';
 
@@ -22,7 +23,7 @@ export async function listRecordings(
     for (const folder of level) {
       for (const [name, type] of await entriesOf(list, folder)) {
         if (found.length >= files) return found;
-        const path = folder === '' ? name : `${folder}/${name}`;
+        const path = pathIn(folder, name);
         if (type === fileTypes.file && isRecording(name)) found.push(path);
         if (type === fileTypes.folder && !name.startsWith('.') && name !== 'node_modules') next.push(path);
       }

@@ -18,6 +18,11 @@ export function nameOf(path: string): string {
   return path.slice(path.lastIndexOf('/') + 1);
 }
 
+/** `recordings` of `recordings/belt.csv`, '' of `belt.csv`. */
+export function folderOf(path: string): string {
+  return path.slice(0, Math.max(0, path.lastIndexOf('/')));
+}
+
 /** `belt` of `recordings/belt.csv` and of `belt.pairing.json`. */
 export function stemOf(path: string): string {
   return nameOf(path).replace(/(\.pairing\.json|\.[^.]*)$/i, '');

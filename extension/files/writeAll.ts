@@ -1,6 +1,7 @@
-import { readMark } from '../../core/files/generatedMark';
+import { fileChange } from '../../core/files/fileChange';
 import { type Finding, finding } from '../../core/findings/finding';
 import { type Disk, DiskError } from './disk';
+import { folderOf } from './relativePath';
 
 /** A file to be written: its path from the document's folder, with forward slashes, and its bytes. */
 export interface NewFile {
@@ -62,24 +63,10 @@ async function compare(
     const kind = await disk.stat(path);
     if (kind === 'missing') return 'new';
     if (kind === 'other') return finding('foreign-file');
-    const existing = await disk.read(path);
-    if (same(existing, bytes)) return 'unchanged';
-    return readMark(startOf(existing)) === null ? finding('foreign-file') : 'changed';
+    const change = fileChange(await disk.read(path), bytes);
+    return change === 'foreign' ? finding('foreign-file') : change;
   } catch (error) {
     if (!(error instanceof DiskError)) throw error;
     return finding('not-writable', { error: error.code });
   }
-}
-
-function same(a: Uint8Array, b: Uint8Array): boolean {
-  return a.length === b.length && a.every((byte, i) => byte === b[i]);
-}
-
-/** The first bytes as characters of the same number: an NPY file is no UTF-8. */
-function startOf(bytes: Uint8Array): string {
-  return Array.from(bytes.subarray(0, 4096), (byte) => String.fromCharCode(byte)).join('');
-}
-
-function folderOf(path: string): string {
-  return path.slice(0, Math.max(0, path.lastIndexOf('/')));
 }

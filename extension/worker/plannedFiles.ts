@@ -1,11 +1,8 @@
 import { resolveInside } from '../../core/document/paths';
 import type { DesignFile } from '../../core/files/designFiles';
-import { readMark } from '../../core/files/generatedMark';
+import { fileChange, markBytes } from '../../core/files/fileChange';
 import type { Host } from '../../core/pipeline/host';
 import type { PlannedFile } from '../../core/protocol/views';
-
-/** As much of a file as holds its first line. */
-const markBytes = 4096;
 
 /**
  * Files as they would be written against what is on disk. The same inputs give the same bytes, so that files that are
@@ -32,11 +29,6 @@ async function changeOf(host: Host, path: string | null, bytes: Uint8Array): Pro
   const source = path === null ? 'outside' : await host.open(path);
   if (source === 'missing') return 'new';
   if (typeof source === 'string') return 'foreign';
-  if (source.size === bytes.length) {
-    const written = await source.read(0, source.size);
-    if (written.length === bytes.length && written.every((byte, i) => byte === bytes[i])) return 'unchanged';
-  }
-  const start = await source.read(0, Math.min(source.size, markBytes));
-  const text = new TextDecoder('latin1').decode(start);
-  return readMark(text) === null ? 'foreign' : 'changed';
+  const looked = Math.max(markBytes, bytes.length + 1);
+  return fileChange(await source.read(0, Math.min(source.size, looked)), bytes);
 }

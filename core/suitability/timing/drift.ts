@@ -10,7 +10,7 @@ import { newPairSpectra, type PairSpectra, pairSpectra, pushWindow } from './pai
 import { phasePeak } from './phasePeak';
 import { trustedBins } from './trustedBins';
 
-/** The course of the lag between files of two clocks. */
+/** How the lag between files of two clocks changes along the recording. */
 export interface Drift {
   /** Parts in a million by which the lag grows: positive where the desired signal's clock is the faster. */
   ppm: number;
