@@ -20,11 +20,20 @@ export function newErrorTally(expected: number, blocks: number): ErrorTally {
   const total = (row: Float64Array) => row.reduce((sum, value) => sum + value, 0);
   return {
     add(d, y) {
-      for (let n = 0; n < d.length; n++) {
+      for (let n = 0; n < d.length; ) {
         const b = Math.min(blocks - 1, Math.floor(((samples + n) * blocks) / expected));
-        const e = d[n] - y[n];
-        error[b] += e * e;
-        desired[b] += d[n] * d[n];
+        // Where block b ends among these samples; the last takes whatever comes.
+        const end = b === blocks - 1 ? d.length : Math.ceil(((b + 1) * expected) / blocks) - samples;
+        const to = Math.max(n + 1, Math.min(d.length, end));
+        let errorSum = error[b];
+        let desiredSum = desired[b];
+        for (; n < to; n++) {
+          const e = d[n] - y[n];
+          errorSum += e * e;
+          desiredSum += d[n] * d[n];
+        }
+        error[b] = errorSum;
+        desired[b] = desiredSum;
       }
       samples += d.length;
     },

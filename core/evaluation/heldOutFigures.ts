@@ -1,7 +1,8 @@
 import { type TargetFilter, targetSimulator } from '../numbers/targetFilter';
 import type { Pace } from '../pace';
-import { newWelch, type Welch, welchSegment } from '../spectra/welch';
+import { welchSegment } from '../spectra/welch';
 import { countsReader } from './countsReader';
+import { type ErrorSpectra, newErrorSpectra } from './errorSpectra';
 import { blockCount, type ErrorTally, newErrorTally, relativeStandardError } from './errorTally';
 import { type Filter, filterLength } from './filter';
 import { filterStretch } from './filterStretch';
@@ -55,7 +56,7 @@ export async function evaluate(
 ): Promise<Evaluation> {
   const samples = runs.reduce((sum, run) => sum + run.samples, 0);
   const segment = welchSegment(samples, longestSegment);
-  const welch = newWelch(3, segment, sampleRate);
+  const spectra = newErrorSpectra(segment, sampleRate);
   const targetTally = newTargetTally();
   const outside = newErrorTally(1, 1);
   const takes: TakeFigure[] = [];
@@ -63,13 +64,13 @@ export async function evaluate(
   let desiredEnergy = 0;
   for (const run of runs) {
     const tally = newErrorTally(run.samples, blockCount(run.samples, filterLength(filter)));
-    await evaluateRun(run, filter, target, pace, { tally, outside, welch, targetTally });
+    await evaluateRun(run, filter, target, pace, { tally, outside, spectra, targetTally });
     takes.push({ name: run.take.name, ...takeFigure(tally) });
     errorEnergy += tally.errorEnergy;
     desiredEnergy += tally.desiredEnergy;
   }
   const total = errorFigure(samples, errorEnergy, desiredEnergy);
-  const [desired, output, error] = welch.densities();
+  const { desired, output, error } = spectra.densities();
   const frequencies = desired.map((_, f) => (f * sampleRate) / segment);
   return {
     total,
@@ -78,7 +79,7 @@ export async function evaluate(
         ? errorFigure(outside.samples, outside.errorEnergy, outside.desiredEnergy).nmseDb
         : null,
     takes,
-    spectra: { segment, averages: welch.averages, frequencies, desired, output, error },
+    spectra: { segment, averages: spectra.averages, frequencies, desired, output, error },
     target: targetTally.figures(total, desiredEnergy),
   };
 }
@@ -86,7 +87,7 @@ export async function evaluate(
 interface Sinks {
   tally: ErrorTally;
   outside: ErrorTally;
-  welch: Welch;
+  spectra: ErrorSpectra;
   targetTally: TargetTally;
 }
 
@@ -95,15 +96,14 @@ async function evaluateRun(
   filter: Filter,
   target: TargetFilter,
   pace: Pace,
-  { tally, outside, welch, targetTally }: Sinks,
+  { tally, outside, spectra, targetTally }: Sinks,
 ): Promise<void> {
   const { read, counts } = countsReader(take, filter, target);
   const simulate = targetSimulator(target);
   const { outputCount } = target.scaling;
   const weighing = newWeighing(filter.band);
-  let error = new Float64Array(0);
   for (const stretch of segments) {
-    welch.gap();
+    spectra.gap();
     const whole = weighing.begin(stretch);
     await filterStretch(read, whole, filter.coefficients, pace, (block) => {
       const { from } = block;
@@ -111,11 +111,7 @@ async function evaluateRun(
       targetTally.count(run);
       const weighed = weighing.push([block.desired, block.output, run.output]);
       if (weighed === null) return;
-      const [desired, output] = weighed.raw;
-      const { length } = desired;
-      if (error.length !== length) error = new Float64Array(length);
-      for (let n = 0; n < length; n++) error[n] = desired[n] - output[n];
-      welch.push([desired, output, error]);
+      spectra.push(weighed.raw[0], weighed.raw[1]);
       const [d, y, counted] = weighed.inside;
       tally.add(d, y);
       targetTally.add(d, y, counted, outputCount);

@@ -36,14 +36,22 @@ export function newTargetTally(): TargetTally {
   const counted = { accumulatorOverflows: 0, outputOverflows: 0, samples: 0 };
   return {
     add(desired, output, counts, outputCount) {
+      // Sums in locals: variables that a closure holds are stored at each step.
+      let errors = errorEnergy;
+      let gaps = gapEnergy;
+      let outputs = outputEnergy;
       for (let n = 0; n < desired.length; n++) {
+        const ideal = output[n];
         const y = counts[n] * outputCount;
         const e = desired[n] - y;
-        const gap = y - output[n];
-        errorEnergy += e * e;
-        gapEnergy += gap * gap;
-        outputEnergy += output[n] * output[n];
+        const gap = y - ideal;
+        errors += e * e;
+        gaps += gap * gap;
+        outputs += ideal * ideal;
       }
+      errorEnergy = errors;
+      gapEnergy = gaps;
+      outputEnergy = outputs;
     },
     count({ output, accumulatorOverflows, outputOverflows }) {
       counted.accumulatorOverflows += accumulatorOverflows;

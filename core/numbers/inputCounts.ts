@@ -1,5 +1,5 @@
 import type { Scaling } from './scaling';
-import { clamp, roundHalfUp, wordRange } from './words';
+import { wordRange } from './words';
 
 /**
  * What the firmware's filter sees of a raw signal: `clamp(floor(raw/q + ½) - floor(mean/q + ½))` to the input word.
@@ -11,10 +11,15 @@ export function inputCounts(
   inputWord: number,
   scaling: Scaling,
 ): Float64Array {
-  const range = wordRange(inputWord);
+  const { min, max } = wordRange(inputWord);
   const q = scaling.inputCount[input];
   const mean = scaling.inputMeanCounts[input];
-  return raw.map((value) => clamp(roundHalfUp(value / q) - mean, range));
+  const counts = new Float64Array(raw.length);
+  for (let n = 0; n < raw.length; n++) {
+    const count = Math.floor(raw[n] / q + 0.5) - mean;
+    counts[n] = Math.max(min, Math.min(max, count));
+  }
+  return counts;
 }
 
 /** The same for float words: the word's rounding of `raw - mean`. */

@@ -1,15 +1,8 @@
 import { type ExactSums, exactSums } from './exactSums';
+import { limb, splitRows } from './limbs';
 
 /** Like {@link ExactSums}, for sums that doubles cannot hold. */
 export type WideSums = (inputs: readonly Float64Array[]) => bigint[];
-
-const limb = 65536;
-
-/** The upper part of whole numbers, `floor(v / 2^16)`, and what is left, 0..65535. */
-function split(rows: readonly Float64Array[]): [Float64Array[], Float64Array[]] {
-  const high = rows.map((row) => row.map((v) => Math.floor(v / limb)));
-  return [high, rows.map((row, r) => row.map((v, k) => v - limb * high[r][k]))];
-}
 
 /** A sum as `high · 2^32 + low`, 0 ≤ low < 2^32, both exact. */
 export interface SplitSums {
@@ -22,11 +15,11 @@ export interface SplitSums {
  * products are exact in doubles (below 2^53 up to 2^20 products), as are their carries.
  */
 export function splitSums(values: readonly Float64Array[]): (inputs: readonly Float64Array[]) => SplitSums {
-  const [highTaps, lowTaps] = split(values);
+  const [highTaps, lowTaps] = splitRows(values);
   const ofHigh: ExactSums = exactSums(highTaps, limb);
   const ofLow: ExactSums = exactSums(lowTaps, limb);
   return (inputs) => {
-    const [highInputs, lowInputs] = split(inputs);
+    const [highInputs, lowInputs] = splitRows(inputs);
     const high = ofHigh(highInputs);
     const highLow = ofHigh(lowInputs);
     const lowHigh = ofLow(highInputs);

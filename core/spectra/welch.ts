@@ -1,5 +1,7 @@
 import { hann } from './hann';
-import { naturalFrequency, newSegmentSpectra } from './segmentSpectra';
+import { oneSidedDensity } from './oneSidedDensity';
+import { addPower } from './products';
+import { newSegmentSpectra } from './segmentSpectra';
 
 /**
  * Power spectral densities by Welch's method (IEEE Trans. Audio Electroacoust. 15, 1967): periodic Hann window,
@@ -32,15 +34,13 @@ export function welchSegment(samples: number, most: number): number {
  * @param sampleRate in Hz
  */
 export function newWelch(count: number, segment: number, sampleRate: number): Welch {
-  const half = segment / 2;
-  const sums = Array.from({ length: count }, () => new Float64Array(half + 1));
+  const sums = Array.from({ length: count }, () => new Float64Array(segment / 2 + 1));
   let averages = 0;
   const window = hann(segment);
   const channels = sums.map((_, signal) => ({ signal, window }));
   const segments = newSegmentSpectra(channels, segment, (spectra) => {
-    spectra.forEach(({ re, im }, s) => {
-      const sum = sums[s];
-      for (let h = 0; h <= half; h++) sum[h] += re[h] * re[h] + im[h] * im[h];
+    spectra.forEach((spectrum, s) => {
+      addPower(sums[s], spectrum);
     });
     averages++;
   });
@@ -52,17 +52,7 @@ export function newWelch(count: number, segment: number, sampleRate: number): We
       return averages;
     },
     densities() {
-      const energy = window.reduce((sum, value) => sum + value * value, 0);
-      const unit = averages === 0 ? 0 : 1 / (averages * sampleRate * energy);
-      return sums.map((sum, s) => {
-        const density = new Float64Array(half + 1);
-        const scale = segments.scales[s];
-        for (let h = 0; h <= half && scale > 0; h++) {
-          const f = naturalFrequency(h, half);
-          density[f] = (sum[h] * unit * (f === 0 || f === half ? 1 : 2)) / (scale * scale);
-        }
-        return density;
-      });
+      return sums.map((sum, s) => oneSidedDensity(sum, window, averages, sampleRate, segments.scales[s]));
     },
   };
 }

@@ -32,7 +32,7 @@ describe('quarterCosines', () => {
 });
 
 describe('transformOf', () => {
-  it.each([4, 8, 16, 32, 128, 256, 2048])('equals the defining sum for size %i', (size) => {
+  it.each([4, 8, 16, 32, 64, 128, 256, 512, 1024, 2048, 4096])('equals the defining sum for size %i', (size) => {
     const random = seededNormal(size);
     const re = Float64Array.from({ length: size }, random);
     const im = Float64Array.from({ length: size }, random);
