@@ -30,7 +30,7 @@ export async function gatherSpectra(
   gatherers: readonly CrossSpectraGatherer[],
   pace: Pace,
 ): Promise<CrossSpectra[]> {
-  const read = signalReader(take, { means, delay: -lag });
+  const read = signalReader(take, { means, delay: -lag, reuse: true });
   const total = totalLength(stretches);
   let done = 0;
   for (const { from, to } of stretches) {

@@ -24,10 +24,13 @@ const fewestValues = 4;
  */
 export function newLowLevel(pcm: boolean, bits: number | null, resolution: Resolution): ChannelCheck {
   let used = 0;
+  const lowest = bits === null ? 0 : 1 << (32 - bits);
   const values: number[] = [];
   return {
     add(samples) {
       if (!pcm) return collect(values, samples);
+      // Once the lowest bit that the format has is in use there is nothing more to find.
+      if (bits !== null && (used & lowest) !== 0) return;
       let all = used;
       for (let k = 0; k < samples.length; k++) all |= samples[k] * finest;
       used = all;
