@@ -1,3 +1,5 @@
+import { giveWay } from './giveWay';
+
 /** Thrown where the user stopped a computation. */
 export class Stopped extends Error {
   constructor() {
@@ -34,7 +36,7 @@ export function newPace(
     async step(what, done, total) {
       report(what, done, total);
       if (performance.now() - last >= turn) {
-        await new Promise<void>((resolve) => setTimeout(resolve, 0));
+        await giveWay();
         await between();
         last = performance.now();
       }

@@ -12,3 +12,11 @@ declare class TextEncoder {
 declare function setTimeout(callback: () => void, milliseconds?: number): unknown;
 
 declare const performance: { now(): number };
+
+/** Node alone has it. */
+declare const setImmediate: ((callback: () => void) => unknown) | undefined;
+
+declare class MessageChannel {
+  readonly port1: { onmessage: (() => void) | null };
+  readonly port2: { postMessage(message: null): void };
+}

@@ -121,18 +121,24 @@ function multiply(into: Float64Array, samples: Float64Array, from: number, windo
 /** Parts a packed spectrum into those of its two real signals: A = (Z + Z*)/2, B = (Z - Z*)/2i. */
 function part({ re, im }: Spectrum, a: Spectrum, b: Spectrum): void {
   const half = re.length / 2;
-  a.re[0] = re[0];
-  b.re[0] = im[0];
-  a.re[half] = re[1];
-  b.re[half] = im[1];
+  const { re: aRe, im: aIm } = a;
+  const { re: bRe, im: bIm } = b;
+  aRe[0] = re[0];
+  bRe[0] = im[0];
+  aRe[half] = re[1];
+  bRe[half] = im[1];
   // Frequencies below half the sample rate stand at the even places p = 2h; in [2^j, 2^(j+1)) the conjugate of
   // place p is 3·2^j - 1 - p.
   for (let base = 1; base < half; base *= 2) {
     for (let h = base, p = 2 * base, q = 4 * base - 1; h < 2 * base; h++, p += 2, q -= 2) {
-      a.re[h] = 0.5 * (re[p] + re[q]);
-      a.im[h] = 0.5 * (im[p] - im[q]);
-      b.re[h] = 0.5 * (im[p] + im[q]);
-      b.im[h] = 0.5 * (re[q] - re[p]);
+      const pRe = re[p];
+      const pIm = im[p];
+      const qRe = re[q];
+      const qIm = im[q];
+      aRe[h] = 0.5 * (pRe + qRe);
+      aIm[h] = 0.5 * (pIm - qIm);
+      bRe[h] = 0.5 * (pIm + qIm);
+      bIm[h] = 0.5 * (qRe - pRe);
     }
   }
 }

@@ -107,14 +107,19 @@ export function newFlatRuns(visitor: RunVisitor): FlatRuns {
     at = -openLength;
     to = k;
     if (to - at > 1) close(open, from);
-    for (k++; k < length; k++) {
-      if (samples[k] !== samples[k - 1]) continue;
+    for (let last = samples[k++]; k < length; k++) {
+      const value = samples[k];
+      if (value !== last) {
+        last = value;
+        continue;
+      }
       const begin = k - 1;
       while (k < length && samples[k] === samples[begin]) k++;
       if (k === length) return begin;
       at = begin;
       to = k;
-      close(samples[begin], from);
+      close(value, from);
+      last = samples[k];
     }
     return length - 1;
   }
