@@ -1,12 +1,10 @@
 import { crossValidated, crossValidatedError, fitted } from '../choice/candidate';
+import { decibelsOfE } from '../choice/errorCurve';
 import { powerDecibels, roundedDecibels } from '../figures/decibels';
 import { fixed } from '../figures/numbers';
 import type { Choice } from '../pipeline/choose';
 import { macsPerSample } from './filterCost';
 import type { Json } from './jsonText';
-
-/** 10 / ln 10: a relative error in decibels, to first order. */
-const decibelsOfE = 4.342944819032518;
 
 /**
  * What `choose --json` prints. Figures of the candidates stand at `[length][delay][regularisation]`, cross-validated

@@ -1,5 +1,6 @@
 import type { NewSha256 } from '../bytes/sha256';
 import { designNote } from '../note/designNote';
+import { choicePicture } from '../note/pictures/choice';
 import { coherencePicture } from '../note/pictures/coherence';
 import { impulsePicture } from '../note/pictures/impulse';
 import { magnitudePicture } from '../note/pictures/magnitude';
@@ -80,11 +81,13 @@ function sources(result: DesignResult, mark: Mark): DesignFile[] {
 function note(result: DesignResult, mark: Mark, stem: string): DesignFile[] {
   const line = markLine(mark, 'markup');
   const coherence = coherencePicture(result, line);
+  const choice = choicePicture(result, line);
   return [
     text(`${stem}.note.md`, designNote(result, mark, stem)),
     text(`${stem}.note/impulse.svg`, impulsePicture(result, line)),
     text(`${stem}.note/magnitude.svg`, magnitudePicture(result, line)),
     text(`${stem}.note/spectra.svg`, spectraPicture(result, line)),
+    ...(choice === null ? [] : [text(`${stem}.note/choice.svg`, choice)]),
     ...(coherence === null ? [] : [text(`${stem}.note/coherence.svg`, coherence)]),
   ];
 }

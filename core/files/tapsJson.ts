@@ -3,6 +3,7 @@ import type { Finding } from '../findings/finding';
 import { say } from '../findings/say';
 import type { DesignResult, ErrorFigure, HeldOutFigures, TakeSummary } from '../pipeline/designResult';
 import { arithmeticJson } from './arithmeticJson';
+import { choiceLinesJson } from './choiceLinesJson';
 import { confidenceJson, residualsJson } from './confidenceJson';
 import { filterCost } from './filterCost';
 import { type Mark, markText } from './generatedMark';
@@ -61,6 +62,7 @@ export function resultJson(result: DesignResult): { [key: string]: Json } {
     confidence: confidenceJson(result),
     residuals: residualsJson(result),
     inspection: inspectionJson(result.inspection),
+    choice: choiceLinesJson(result.choice),
     arithmetic: arithmeticJson(result),
     shape: shapeJson(result.shape),
     words: wordsJson(result),

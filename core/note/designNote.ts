@@ -4,6 +4,7 @@ import { plain } from './markdown';
 import { cautions } from './sections/cautions';
 import { choices } from './sections/choices';
 import { cost } from './sections/cost';
+import { crossValidation } from './sections/crossValidation';
 import { firmware } from './sections/firmware';
 import { numberFormat } from './sections/numberFormat';
 import { outcome } from './sections/outcome';
@@ -28,6 +29,7 @@ export function designNote(result: DesignResult, mark: Mark, stem: string): stri
     recordings(result),
     suitability(result),
     choices(result),
+    crossValidation(result, `${stem}.note`),
     outcome(result),
     pictures(result, `${stem}.note`),
     numberFormat(result),
@@ -36,5 +38,7 @@ export function designNote(result: DesignResult, mark: Mark, stem: string): stri
     taps(result, `${stem}.taps.json`),
     reproduce(result, mark.digest),
     cautions(result),
-  ].join('\n\n')}\n`;
+  ]
+    .filter((text) => text !== '')
+    .join('\n\n')}\n`;
 }

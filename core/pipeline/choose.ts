@@ -1,8 +1,6 @@
-import { gatherStatistics } from '../choice/blockSums';
 import { edgeFindings, shapeFindings } from '../choice/choiceFindings';
 import type { Folds } from '../choice/folds';
 import { type Opinion, secondOpinions } from '../choice/opinions';
-import { planSearch } from '../choice/plan';
 import { search } from '../choice/search';
 import type { SearchResult } from '../choice/searchResult';
 import { type Suggestion, suggest } from '../choice/suggest';
@@ -14,12 +12,12 @@ import { macsPerSample } from '../files/filterCost';
 import { type Finding, finding, Refusal, worstFirst } from '../findings/finding';
 import { say } from '../findings/say';
 import { bandOf } from './askedBand';
+import { planChoice } from './choiceStatistics';
 import { fitPair } from './fitPair';
 import type { Host, Work } from './host';
 import { inspectSignals } from './inspectSignals';
 import { momentsOf } from './momentsOf';
 import { type DocumentPlace, type Pairing, readPairing } from './pairing';
-import { momentsKey } from './stageKeys';
 
 /** What a search over length, delay and regularisation found. */
 export interface Choice {
@@ -72,30 +70,24 @@ async function chooseFor(
   findings: Finding[],
   onCurves?: (soFar: SearchResult, pairing: Pairing) => void,
 ): Promise<Choice> {
-  const { document, takes } = pairing;
+  const { document } = pairing;
   const { pace, keep } = work;
-  const moments = await momentsOf(pairing, work);
-  const band = bandOf(pairing);
-  const plan = planSearch(takes, document.job, document.filter, desiredIsInput(pairing), band?.history);
-  if ('refused' in plan) throw new Refusal([plan.refused]);
-  const { grid, layout, folds } = plan;
-  const key = [momentsKey(pairing), document.prepare, layout, folds];
-  const found = await keep('search', [key, grid], async () => {
-    const statistics = await keep('blocks', key, () =>
-      gatherStatistics(takes, folds, layout, moments, pace, band),
-    );
-    return search(statistics, layout, grid, {
+  const planned = planChoice(pairing, work);
+  if ('refused' in planned) throw new Refusal([planned.refused]);
+  const { grid, layout, folds } = planned.plan;
+  const found = await keep('search', [planned.key, grid], async () =>
+    search(await planned.statistics(), layout, grid, {
       first: grid.regularisations.indexOf(document.filter.regularisation),
       pace,
       ...(onCurves && { onCurves: (soFar: SearchResult) => onCurves(soFar, pairing) }),
-    });
-  });
+    }),
+  );
   // The horizon of a prediction is what is wanted of it: a nearer one is easier and no better.
   const kept = document.job === 'predict' ? grid.delays.indexOf(document.filter.delay) : null;
   const suggestion = suggest(found, kept);
   if (suggestion === null) throw new Refusal([finding('nothing-to-choose')]);
   findings.push(
-    ...plan.findings,
+    ...planned.plan.findings,
     ...edgeFindings(grid, suggestion, kept !== null),
     ...shapeFindings(document.filter),
   );
@@ -109,20 +101,11 @@ async function chooseFor(
     heldOut: await heldOutOf(pairing, suggestion, work, findings),
     opinions: secondOpinions(found, kept),
     attainableDb:
-      band === null
-        ? (await inspectSignals(pairing, moments.means, work)).spectra.together.attainableDb
+      bandOf(pairing) === null
+        ? (await inspectSignals(pairing, (await momentsOf(pairing, work)).means, work)).spectra.together
+            .attainableDb
         : null,
   };
-}
-
-function desiredIsInput({ takes, recordings }: Pairing): boolean {
-  const digest = (file: string) => recordings.get(file)?.sha256;
-  return takes.some(({ inputs, desired }) =>
-    inputs.some(
-      ({ recording, channel }) =>
-        digest(recording.file) === digest(desired.recording.file) && channel === desired.channel,
-    ),
-  );
 }
 
 /** The suggestion as the document would have it, fitted on all fit intervals and run over the held-out ones. */

@@ -10,6 +10,7 @@ import { type TestVectors, testVectors } from '../numbers/testVectors';
 import { noMeans, signalReader } from '../pair/signals';
 import { unprovenGain } from '../suitability/pair/unprovenGain';
 import { arithmeticResult } from './arithmeticResult';
+import { choiceLines } from './choiceLines';
 import { confidenceOf } from './confidence';
 import type { DesignResult } from './designResult';
 import { type Fit, fitPair } from './fitPair';
@@ -34,6 +35,8 @@ export interface DesignWatch {
   read?(read: ReadPairing): void;
   measured?(pairing: Pairing, fit: Fit, measured: Measured): void;
   inspected?(inspection: PairInspection): void;
+  /** All but `choice`, which is still null. */
+  evaluated?(result: DesignResult): void;
 }
 
 /** A solution in doubles, in the target's numbers, and what both are worth. */
@@ -69,7 +72,7 @@ export async function design(
     watch.measured?.(pairing, fit, measured);
     const inspection = await inspectPair(pairing, fit.moments.means, findings, host);
     watch.inspected?.(inspection);
-    const result = await evaluateDesign(
+    const figures = await evaluateDesign(
       host,
       pairing,
       place,
@@ -77,6 +80,8 @@ export async function design(
       findings,
       inspection,
     );
+    watch.evaluated?.(figures);
+    const result = { ...figures, choice: await choiceLines(pairing, host) };
     return { result, findings: result.findings };
   } catch (error) {
     if (!(error instanceof Refusal)) throw error;
@@ -151,6 +156,7 @@ export async function evaluateDesign(
         }
       : null,
     spectra: evaluation.spectra,
+    choice: null,
     arithmetic: arithmeticResult(target.filter, evaluation.target, pairing),
     shape,
     words: await host.keep('words', measureKey(pairing), () =>

@@ -8,6 +8,7 @@ import type { WorstCase } from '../numbers/worstCase';
 import type { Interval } from '../pair/intervals';
 import type { Levels } from '../recordings/levels';
 import type { Method } from '../solvers/prepare';
+import type { ChoiceLines, WithheldLines } from './choiceLines';
 import type { Confidence } from './confidence';
 import type { PairInspection } from './inspectPair';
 import type { WordStudy } from './studyWords';
@@ -111,6 +112,8 @@ export interface DesignResult {
   /** Of the pair; null where it was not asked for. */
   inspection: PairInspection | null;
   arithmetic: ArithmeticResult;
+  /** The document's length, delay and regularisation held against others; null where it was not asked for. */
+  choice: ChoiceLines | WithheldLines | null;
   /** Null where the taps are free. */
   shape: ShapeResult | null;
   /** Null where the target computes in floats, or where it was not asked for. */

@@ -1,4 +1,5 @@
-import { type Candidate, crossValidated, crossValidatedError, fitted } from '../choice/candidate';
+import type { Candidate } from '../choice/candidate';
+import { crossDb, errorCurve } from '../choice/errorCurve';
 import type { SearchResult } from '../choice/searchResult';
 import type { PairingDocument } from '../document/pairingDocument';
 import { powerDecibels } from '../figures/decibels';
@@ -8,11 +9,6 @@ import type { Choice } from '../pipeline/choose';
 import type { ChoiceView } from '../protocol/views';
 import { findingView } from './findingView';
 import { finiteOrNull } from './finiteOrNull';
-
-/** 10 / ln 10: a relative error in decibels, to first order. */
-const decibelsOfE = 4.342944819032518;
-
-type Curves = ChoiceView['byLength'];
 
 /**
  * Curves through the document's own filter, whose values are in the grid whatever else is.
@@ -34,7 +30,7 @@ export function choiceView(
     regularisation: grid.regularisations.indexOf(regularisation),
   };
   const along = (name: keyof Candidate, values: readonly number[]) =>
-    curves(
+    errorCurve(
       search,
       values.map((_, place) => ({ ...present, [name]: place })),
     );
@@ -64,19 +60,4 @@ export function choiceView(
     opinions: (choice?.opinions ?? []).map((opinion) => ({ ...opinion })),
     findings: findings.map((found) => findingView(found, text)),
   };
-}
-
-function curves(search: SearchResult, candidates: readonly Candidate[]): Curves {
-  const row = (value: (candidate: Candidate) => number) => Float64Array.from(candidates, value);
-  return {
-    crossDb: row((candidate) => crossDb(search, candidate)),
-    errorDb: row((candidate) => decibelsOfE * (crossValidatedError(search, candidate) ?? Number.NaN)),
-    fitDb: row((candidate) => powerDecibels(fitted(search, candidate))),
-  };
-}
-
-/** NaN where the candidate is not in the grid or could not be solved. */
-function crossDb(search: SearchResult, candidate: Candidate): number {
-  const inGrid = candidate.length >= 0 && candidate.delay >= 0 && candidate.regularisation >= 0;
-  return inGrid ? powerDecibels(crossValidated(search, candidate)) : Number.NaN;
 }

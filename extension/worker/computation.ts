@@ -79,6 +79,13 @@ export async function compute(
       begin('suitability');
     },
     inspected: () => begin('evidence'),
+    evaluated(result) {
+      const labels = [...result.inputs, result.desired];
+      const bands = result.heldOut?.bands ?? [];
+      send('suitability', suitabilityView(result.findings, text, result.inspection, bands, labels));
+      if (figures !== null) send('evidence', evidenceView(result, figures));
+      begin('firmware');
+    },
   });
   const { result, findings } = designed;
   left.result = result;
@@ -87,11 +94,6 @@ export async function compute(
     for (const part of ['figures', 'evidence', 'firmware'] as const) send(part, null);
     await inspectOnly(host, text, place, findings, send, begin);
   } else {
-    const labels = [...result.inputs, result.desired];
-    const bands = result.heldOut?.bands ?? [];
-    send('suitability', suitabilityView(findings, text, result.inspection, bands, labels));
-    send('evidence', evidenceView(result, figures));
-    begin('firmware');
     await sendFirmware(host, place, result, send);
   }
   begin('choice');

@@ -7,6 +7,7 @@ import type {
   Word,
 } from '../../core/document/pairingDocument';
 import { type Finding, finding } from '../../core/findings/finding';
+import type { ChoiceLines } from '../../core/pipeline/choiceLines';
 import type { Confidence } from '../../core/pipeline/confidence';
 import type { DesignResult, HeldOutFigures, SpectraFigures } from '../../core/pipeline/designResult';
 import { exactFilter } from './exactFilter';
@@ -138,6 +139,7 @@ export function sampleResult(options: SampleOptions = {}): DesignResult {
       samples: { none: 79937, all: 40000, 'disturbance only': 20000 }[options.heldOut ?? 'disturbance only'],
     },
     inspection: null,
+    choice: null,
     shape: null,
     words: integers ? sampleStudy() : null,
     vectors: { input, expected: run.output, parts },
@@ -331,4 +333,21 @@ function spectra(): SpectraFigures {
   );
   const error = frequencies.map((f) => (0.0008 + 0.002 * peak(f, 48, 30)) * (0.8 + 0.4 * uniform()));
   return { segment, averages: 77, frequencies, desired, output: desired.map((d, i) => d - error[i]), error };
+}
+
+/** Errors along the three lines, as a search would find them: a shorter filter is worse, another delay is better. */
+export function sampleChoice(): ChoiceLines {
+  const line = (values: number[], own: number, crossDb: number[]) => ({
+    values,
+    own,
+    crossDb: Float64Array.from(crossDb),
+    errorDb: Float64Array.from(crossDb, () => 0.21),
+    fitDb: Float64Array.from(crossDb, (value) => value - 0.3),
+  });
+  return {
+    length: line([32, 48, 64, 80], 2, [-12.5, -24.25, -30.5, -30.52]),
+    delay: line([-1, 0, 1], 1, [-29.75, -30.5, -31.25]),
+    regularisation: line([1e-6, 1e-4, 1], 1, [Number.NaN, -30.5, -3]),
+    validation: { by: 'blocks', blocks: 10, gap: 128, samples: 77_000 },
+  };
 }

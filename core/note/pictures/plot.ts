@@ -44,22 +44,37 @@ function labels(scale: Plot['y'], count: number): (value: number) => string {
   return size < 1e-2 || size >= 1e5 ? scale.tickFormat(count, '~e') : scale.tickFormat(count);
 }
 
-/** Grid, tick labels (about `xCount` of them along x) and axis titles. */
-export function axes(plot: Plot, xTitle: string, yTitle: string, xCount = 8): string[] {
+/** A place on an axis and what stands there. */
+export interface Tick {
+  at: number;
+  label: string;
+}
+
+/**
+ * Grid, tick labels and axis titles.
+ * @param xTicks about how many along x, or which
+ */
+export function axes(
+  plot: Plot,
+  xTitle: string,
+  yTitle: string,
+  xTicks: number | readonly Tick[] = 8,
+): string[] {
   const { x, y, top, bottom } = plot;
-  const xTicks = x.ticks(xCount);
+  const ticks = typeof xTicks === 'number' ? roundTicks(x, xTicks) : xTicks;
   const yTicks = y.ticks(ticksFor(bottom - top));
-  const xLabel = x.tickFormat(xCount);
   const yLabel = labels(y, ticksFor(bottom - top));
   const middle = coordinate((top + bottom) / 2);
   return [
     `<g stroke="#d8dee4" stroke-width="1">`,
-    ...xTicks.map((t) => `<path d="M${coordinate(x(t))},${top}V${bottom}"/>`),
+    ...ticks.map(({ at }) => `<path d="M${coordinate(x(at))},${top}V${bottom}"/>`),
     ...yTicks.map((t) => `<path d="M${left},${coordinate(y(t))}H${right}"/>`),
     '</g>',
     `<rect x="${left}" y="${top}" width="${right - left}" height="${bottom - top}" fill="none" stroke="${faintInk}"/>`,
     `<g fill="${faintInk}" text-anchor="middle">`,
-    ...xTicks.map((t) => `<text x="${coordinate(x(t))}" y="${bottom + 17}">${xmlText(xLabel(t))}</text>`),
+    ...ticks.map(
+      ({ at, label }) => `<text x="${coordinate(x(at))}" y="${bottom + 17}">${xmlText(label)}</text>`,
+    ),
     '</g>',
     `<g fill="${faintInk}" text-anchor="end">`,
     ...yTicks.map((t) => `<text x="${left - 7}" y="${coordinate(y(t) + 4)}">${xmlText(yLabel(t))}</text>`),
@@ -67,4 +82,9 @@ export function axes(plot: Plot, xTitle: string, yTitle: string, xCount = 8): st
     `<text x="${(left + right) / 2}" y="${bottom + 37}" text-anchor="middle" fill="${ink}">${xmlText(xTitle)}</text>`,
     `<text transform="translate(20,${middle}) rotate(-90)" text-anchor="middle" fill="${ink}">${xmlText(yTitle)}</text>`,
   ];
+}
+
+function roundTicks(x: Plot['x'], count: number): Tick[] {
+  const label = x.tickFormat(count);
+  return x.ticks(count).map((at) => ({ at, label: label(at) }));
 }

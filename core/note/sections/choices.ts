@@ -11,7 +11,7 @@ import { wantedSignalHides, wantedSignalInFit } from '../wantedSignal';
 export function choices(result: DesignResult): string {
   return section(
     'Length, delay, regularisation, windowing',
-    'Chosen by the engineer in the pairing document; `tapwright choose` holds them against other values by cross-validation. What the result says about each choice:',
+    'Chosen by the engineer in the pairing document. What the result says about each choice:',
     bullets([
       length(result),
       delay(result),

@@ -3,7 +3,7 @@ import { jsonText } from '../../../core/files/jsonText';
 import { tapsJson } from '../../../core/files/tapsJson';
 import { finding } from '../../../core/findings/finding';
 import { hostileNames } from '../../support/hostileNames';
-import { type SampleOptions, sampleResult } from '../../support/sampleResult';
+import { type SampleOptions, sampleChoice, sampleResult } from '../../support/sampleResult';
 
 const mark = { document: 'belt.pairing.json', digest: 'a'.repeat(64) };
 const files = { 'belt_taps.h': 'b'.repeat(64) };
@@ -54,6 +54,17 @@ describe('NAME.taps.json', () => {
       findings: [],
       files,
     });
+  });
+
+  it('holds the cross-validated lines, with null where there is no solution', () => {
+    const result = { ...sampleResult(), choice: sampleChoice() };
+    expect(JSON.parse(tapsJson(result, mark, files)).choice).toMatchObject({
+      validation: { by: 'blocks', blocks: 10, gap: 128, samples: 77_000 },
+      length: { values: [32, 48, 64, 80], nmseDb: [-12.5, -24.25, -30.5, -30.52] },
+      regularisation: { nmseDb: [null, -30.5, -3], standardErrorDb: [0.21, 0.21, 0.21] },
+    });
+    const withheld = { ...sampleResult(), choice: { withheld: 'Too short.' } };
+    expect(JSON.parse(tapsJson(withheld, mark, files)).choice).toEqual({ withheld: 'Too short.' });
   });
 
   it('gives coefficients and values back bit by bit, newest-first whatever the order elsewhere', () => {

@@ -1,18 +1,20 @@
 import { execFileSync } from 'node:child_process';
 import { describe, expect, it } from 'vitest';
+import { choicePicture } from '../../../core/note/pictures/choice';
 import { impulsePicture } from '../../../core/note/pictures/impulse';
 import { magnitudePicture } from '../../../core/note/pictures/magnitude';
 import { spectraPicture } from '../../../core/note/pictures/spectra';
 import type { DesignResult } from '../../../core/pipeline/designResult';
 import { hostileNames } from '../../support/hostileNames';
 import { needs, python } from '../../support/programs';
-import { sampleResult } from '../../support/sampleResult';
+import { sampleChoice, sampleResult } from '../../support/sampleResult';
 import { xmlFault } from '../../support/wellFormedXml';
 
 const mark = '<!-- generated -->';
 
 function pictures(result: DesignResult): string[] {
-  return [impulsePicture, magnitudePicture, spectraPicture].map((draw) => draw(result, mark));
+  const choice = choicePicture({ ...result, choice: sampleChoice() }, mark) ?? '';
+  return [...[impulsePicture, magnitudePicture, spectraPicture].map((draw) => draw(result, mark)), choice];
 }
 
 /** Results that are hard to draw. */
@@ -74,12 +76,13 @@ for text in json.load(sys.stdin): xml.dom.minidom.parseString(text.encode('utf-8
   });
 
   it('name their axes with units', () => {
-    const [impulse, magnitude, spectra] = pictures(sampleResult());
+    const [impulse, magnitude, spectra, choice] = pictures(sampleResult());
     expect(impulse).toContain('>delay k in samples of 0.5 ms<');
     expect(magnitude).toContain('>frequency in Hz<');
     expect(magnitude).toContain('>dB re 1 (d unit / x unit)<');
     expect(spectra).toContain('>dB re 1 unit²/Hz of d<');
     expect(spectraPicture(oddResults()[2], mark)).toContain('>frequency in MHz<');
+    for (const title of ['length in taps', 'delay in samples']) expect(choice).toContain(`>${title}<`);
   });
 
   it('tell curves apart by dash as well as by colour', () => {
@@ -113,6 +116,16 @@ for text in json.load(sys.stdin): xml.dom.minidom.parseString(text.encode('utf-8
     const points = /d="(M[^"]*L[^"]*)"/.exec(long)?.[1].match(/[ML]/g)?.length ?? 0;
     expect(points).toBeGreaterThan(600);
     expect(points).toBeLessThanOrEqual(1240);
+  });
+
+  it('mark the value of the document, and break where there is no solution', () => {
+    const svg = choicePicture({ ...sampleResult(), choice: sampleChoice() }, mark) ?? '';
+    expect(
+      [...svg.matchAll(/text-anchor="middle" fill="#1f2328">(64|0|0\.0001)</g)].map((m) => m[1]),
+    ).toEqual(['64', '0', '0.0001']);
+    // Four lengths, three delays and two regularisations that could be solved.
+    expect(svg.match(/h0" stroke-width="5"/g)).toHaveLength(9);
+    expect(choicePicture(sampleResult(), mark)).toBeNull();
   });
 
   it('put the largest magnitude where the response has it', () => {

@@ -32,27 +32,30 @@ describe('quarterCosines', () => {
 });
 
 describe('transformOf', () => {
-  it.each([4, 8, 16, 32, 64, 128, 256, 512, 1024, 2048, 4096])('equals the defining sum for size %i', (size) => {
-    const random = seededNormal(size);
-    const re = Float64Array.from({ length: size }, random);
-    const im = Float64Array.from({ length: size }, random);
-    const wanted = directTransform(re, im);
-    const gotRe = re.slice();
-    const gotIm = im.slice();
-    const transform = transformOf(size);
-    transform.forward(gotRe, gotIm);
-    let worst = 0;
-    for (let p = 0; p < size; p++) {
-      const want = wanted[frequencyAt(p, size)];
-      worst = Math.max(worst, Math.abs(gotRe[p] - want.re), Math.abs(gotIm[p] - want.im));
-      expect(frequencyAt(conjugatePlace(p), size)).toBe((size - frequencyAt(p, size)) % size);
-    }
-    expect(worst / Math.sqrt(size)).toBeLessThan(1e-13);
-    transform.inverse(gotRe, gotIm);
-    worst = 0;
-    for (let k = 0; k < size; k++) {
-      worst = Math.max(worst, Math.abs(gotRe[k] - re[k]), Math.abs(gotIm[k] - im[k]));
-    }
-    expect(worst).toBeLessThan(1e-14);
-  });
+  it.each([4, 8, 16, 32, 64, 128, 256, 512, 1024, 2048, 4096])(
+    'equals the defining sum for size %i',
+    (size) => {
+      const random = seededNormal(size);
+      const re = Float64Array.from({ length: size }, random);
+      const im = Float64Array.from({ length: size }, random);
+      const wanted = directTransform(re, im);
+      const gotRe = re.slice();
+      const gotIm = im.slice();
+      const transform = transformOf(size);
+      transform.forward(gotRe, gotIm);
+      let worst = 0;
+      for (let p = 0; p < size; p++) {
+        const want = wanted[frequencyAt(p, size)];
+        worst = Math.max(worst, Math.abs(gotRe[p] - want.re), Math.abs(gotIm[p] - want.im));
+        expect(frequencyAt(conjugatePlace(p), size)).toBe((size - frequencyAt(p, size)) % size);
+      }
+      expect(worst / Math.sqrt(size)).toBeLessThan(1e-13);
+      transform.inverse(gotRe, gotIm);
+      worst = 0;
+      for (let k = 0; k < size; k++) {
+        worst = Math.max(worst, Math.abs(gotRe[k] - re[k]), Math.abs(gotIm[k] - im[k]));
+      }
+      expect(worst).toBeLessThan(1e-14);
+    },
+  );
 });
