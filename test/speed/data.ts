@@ -34,8 +34,40 @@ export function longPair(samples: number): { x: Float64Array; d: Float64Array } 
 }
 
 /** A 16-bit WAV file of two channels. */
-export function writeWav16(path: string, rate: number, { x, d }: { x: Float64Array; d: Float64Array }): void {
-  const dataBytes = 4 * x.length;
+export function writeWav16(path: string, rate: number, pair: { x: Float64Array; d: Float64Array }): void {
+  const file = openSync(path, 'w');
+  writeSync(file, waveHeader(rate, 4 * pair.x.length));
+  writeFrames(file, pair);
+  closeSync(file);
+}
+
+/** The same signals over and over again as RF64 (EBU Tech 3306), whose sizes pass 4 GiB. */
+export function writeRf64(
+  path: string,
+  rate: number,
+  pair: { x: Float64Array; d: Float64Array },
+  times: number,
+): void {
+  const dataBytes = 4 * pair.x.length * times;
+  const sizes = Buffer.alloc(36);
+  sizes.write('ds64', 0, 'latin1');
+  sizes.writeUInt32LE(28, 4);
+  sizes.writeBigUInt64LE(BigInt(72 + dataBytes), 8);
+  sizes.writeBigUInt64LE(BigInt(dataBytes), 16);
+  sizes.writeBigUInt64LE(BigInt(pair.x.length * times), 24);
+  const header = waveHeader(rate, 0xffffffff - 36);
+  header.write('RF64', 0, 'latin1');
+  header.writeUInt32LE(0xffffffff, 4);
+  header.writeUInt32LE(0xffffffff, 40);
+  const file = openSync(path, 'w');
+  writeSync(file, header.subarray(0, 12));
+  writeSync(file, sizes);
+  writeSync(file, header.subarray(12));
+  for (let k = 0; k < times; k++) writeFrames(file, pair);
+  closeSync(file);
+}
+
+function waveHeader(rate: number, dataBytes: number): Buffer {
   const header = Buffer.alloc(44);
   header.write('RIFF', 0, 'latin1');
   header.writeUInt32LE(36 + dataBytes, 4);
@@ -49,8 +81,10 @@ export function writeWav16(path: string, rate: number, { x, d }: { x: Float64Arr
   header.writeUInt16LE(16, 34);
   header.write('data', 36, 'latin1');
   header.writeUInt32LE(dataBytes, 40);
-  const file = openSync(path, 'w');
-  writeSync(file, header);
+  return header;
+}
+
+function writeFrames(file: number, { x, d }: { x: Float64Array; d: Float64Array }): void {
   const block = 1 << 16;
   const scale = 32767 / 16;
   for (let from = 0; from < x.length; from += block) {
@@ -62,5 +96,4 @@ export function writeWav16(path: string, rate: number, { x, d }: { x: Float64Arr
     }
     writeSync(file, words);
   }
-  closeSync(file);
 }

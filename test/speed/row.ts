@@ -9,6 +9,8 @@ export interface Row {
   ours(folder: string): Promise<number>;
   /** Does the reference's work once and returns its time in seconds. */
   reference(folder: string): Promise<number>;
+  /** Takes minutes: run once, and only where a word on the command line asks for it. */
+  long?: true;
   /** Further figures of the last run, for example peak memory. */
   remark?(): string;
 }

@@ -4,13 +4,16 @@ import { newPace } from '../../../core/pace';
 import { openText } from '../../../core/recordings/text/openText';
 import { openFile } from '../../../extension/node/fileSource';
 import { python } from '../../support/programs';
-import { longPair, longSamples, writeWav16 } from '../data';
+import { longPair, longSamples, writeRf64, writeWav16 } from '../data';
 import { runReference, scripts } from '../python';
 import { type Row, timed } from '../row';
 import { peakOf, runTimed } from './programs';
 
 const csvBytes = 200e6;
 const fitSeconds = 400;
+
+/** Ten-minute recordings that fill 4 GiB. */
+const repeats = 38;
 
 /** Two columns of nine digits. */
 function writeCsv(path: string): void {
@@ -46,28 +49,10 @@ export const fileRows: Row[] = [
     goal: 0.4,
     prepare(folder) {
       writeWav16(join(folder, 'long.wav'), 48000, longPair(longSamples));
-      const track = (channel: number) => ({ file: 'long.wav', channel });
-      const document = {
-        pairing: 1,
-        title: 'Long',
-        job: 'identify',
-        takes: [
-          {
-            inputs: [track(1)],
-            desired: track(2),
-            fit: { from: 0, to: fitSeconds },
-            heldOut: { from: fitSeconds, to: 600 },
-          },
-        ],
-        filter: { length: 1024 },
-        write: { symbol: 'long_path' },
-      };
-      writeFileSync(join(folder, 'long.pairing.json'), JSON.stringify(document));
+      writeDocument(folder, 'long', 1);
     },
     ours: async (folder) => {
-      rmSync(join(folder, 'generated'), { recursive: true, force: true });
-      const cli = resolve('dist', 'cli.js');
-      const seconds = await runTimed(process.execPath, [cli, 'design', 'long.pairing.json'], folder);
+      const seconds = await designTimed(folder, 'long');
       peak = peakOf();
       return seconds;
     },
@@ -75,4 +60,49 @@ export const fileRows: Row[] = [
       runTimed(python, [resolve(scripts, 'wholeJob.py'), 'long.wav', String(fitSeconds)], folder),
     remark: () => `peak ${Math.round(peak)} MiB`,
   },
+  {
+    name: `whole job on 4 GiB: ${repeats} times as long, RF64; our time for 10 min times ${repeats}`,
+    goal: 1.1,
+    long: true,
+    prepare(folder) {
+      const pair = longPair(longSamples);
+      writeWav16(join(folder, 'long.wav'), 48000, pair);
+      writeDocument(folder, 'long', 1);
+      writeRf64(join(folder, 'huge.wav'), 48000, pair, repeats);
+      writeDocument(folder, 'huge', repeats);
+    },
+    ours: async (folder) => {
+      const seconds = await designTimed(folder, 'huge');
+      peak = peakOf();
+      return seconds;
+    },
+    reference: async (folder) => repeats * (await designTimed(folder, 'long')),
+    remark: () => `peak ${Math.round(peak)} MiB`,
+  },
 ];
+
+function writeDocument(folder: string, name: string, times: number): void {
+  const track = (channel: number) => ({ file: `${name}.wav`, channel });
+  const document = {
+    pairing: 1,
+    title: 'Long',
+    job: 'identify',
+    takes: [
+      {
+        inputs: [track(1)],
+        desired: track(2),
+        fit: { from: 0, to: times * fitSeconds },
+        heldOut: { from: times * fitSeconds, to: times * 600 },
+      },
+    ],
+    filter: { length: 1024 },
+    write: { symbol: 'long_path' },
+  };
+  writeFileSync(join(folder, `${name}.pairing.json`), JSON.stringify(document));
+}
+
+/** Seconds from process start to files written. */
+function designTimed(folder: string, name: string): Promise<number> {
+  rmSync(join(folder, 'generated'), { recursive: true, force: true });
+  return runTimed(process.execPath, [resolve('dist', 'cli.js'), 'design', `${name}.pairing.json`], folder);
+}
