@@ -52,6 +52,9 @@ const contextKeys = [
   'resourceFilename',
 ];
 
+/** Context keys that the code sets. */
+const ownContexts = [...named(/'setContext', '([\w.]+)'/g)];
+
 describe('the manifest', () => {
   it('names the commands that are registered, each once, all of one category', () => {
     const registered = readFileSync(join(project, 'extension/commands/register.ts'), 'utf8');
@@ -67,7 +70,7 @@ describe('the manifest', () => {
   it('has every command and view that the code names, and no other', () => {
     const status = 'tapwright.busy';
     const used = named(/['"`](tapwright\.\w+)['"`]/g);
-    const known = [...commandNames, ...viewTypes, ...Object.keys(settings), status];
+    const known = [...commandNames, ...viewTypes, ...Object.keys(settings), ...ownContexts, status];
     expect([...used].filter((name) => !known.includes(name))).toEqual([]);
     expect([...commandNames, ...viewTypes].filter((name) => !used.has(name))).toEqual([]);
   });
@@ -189,6 +192,12 @@ describe('the manifest', () => {
         else expect(event).toMatch(/^(onStepSelected$|onContext:)/);
       }
     }
+    const events = steps.flatMap(({ completionEvents }) => completionEvents).join('\n');
+    const asked = [...events.matchAll(/\btapwright\.\w+/g)].map(([name]) => name);
+    expect(asked.filter((name) => ![...commandNames, ...viewTypes, ...ownContexts].includes(name))).toEqual(
+      [],
+    );
+    expect(ownContexts.filter((name) => !asked.includes(name))).toEqual([]);
   });
 
   it('has scripts that run scripts and files that are there', () => {

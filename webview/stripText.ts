@@ -40,9 +40,14 @@ export function stripText(state: PageState): StripText {
 /** Of a recording by itself: what it is. */
 function recordingText(state: PageState): StripText {
   const how = freshness(state, 'recording');
-  const file = viewOf(state, 'recording')?.file ?? null;
+  const view = viewOf(state, 'recording');
+  const file = view?.file ?? null;
   const texts = file === null ? [] : [phrase(file.format), ...shapeOf(file)];
-  const broken = how === 'fresh' && file === null ? t('The recording cannot be read.') : null;
+  const isGone = view?.findings.some(({ code }) => code === 'missing-file') ?? false;
+  const unread = isGone
+    ? t('The file is no longer there: deleted, moved or renamed.')
+    : t('The recording cannot be read.');
+  const broken = how === 'fresh' && file === null ? unread : null;
   return {
     title: state.file,
     figures: texts.map((text) => ({ text, freshness: how })),

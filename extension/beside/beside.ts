@@ -33,6 +33,7 @@ export class Beside {
   private timer: ReturnType<typeof setTimeout> | undefined;
   private keepTimer: ReturnType<typeof setTimeout> | undefined;
   private readonly memoryKey: string;
+  private finding: Promise<void> = Promise.resolve();
 
   /** An entry that is new, changed or gone; null: taps files beside the pairings have changed. */
   readonly onDidChange = this.changes.event;
@@ -66,7 +67,17 @@ export class Beside {
   }
 
   /** Finds the workspace's pairings and looks at each, what was known of them at hand. */
-  async find(): Promise<void> {
+  find(): Promise<void> {
+    this.finding = this.findAll();
+    return this.finding;
+  }
+
+  /** Resolves once the workspace's pairings are known and looked at. */
+  async found(): Promise<void> {
+    await this.finding.catch(() => {});
+  }
+
+  private async findAll(): Promise<void> {
     const begun = performance.now();
     const found = await vscode.workspace.findFiles('**/*.pairing.json', passedOver);
     const known = this.context.workspaceState.get<Memory>(this.memoryKey, {});

@@ -1,5 +1,6 @@
 import * as vscode from 'vscode';
 import { pathIn } from '../../core/document/paths';
+import { visible } from '../../core/figures/visible';
 import type { Services } from '../services';
 import type { Beside } from './beside';
 import { checkPairing } from './checkPairing';
@@ -67,9 +68,11 @@ class CheckTerminal implements vscode.Pseudoterminal {
   private async run(): Promise<void> {
     let worst = 0;
     try {
+      // A task can be run before the workspace has been looked through.
+      await this.beside.found();
       const checked = this.pairings();
       if (checked.length === 0) {
-        this.print('no pairing document was found');
+        this.print(this.nothingFound());
         worst = exits['bad-input'];
       }
       for (const { document, path } of checked) {
@@ -84,6 +87,11 @@ class CheckTerminal implements vscode.Pseudoterminal {
       worst = exits['bad-input'];
     }
     this.end.fire(worst);
+  }
+
+  private nothingFound(): string {
+    if (this.wanted === null) return 'no pairing document was found in the workspace';
+    return `${visible(this.wanted)}:1:1: error: there is no such pairing document in the workspace. "pairing" of the task is a path from the workspace folder, or left out for all. [missing-file]`;
   }
 
   private pairings(): { document: vscode.Uri; path: string }[] {

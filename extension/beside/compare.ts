@@ -4,6 +4,7 @@ import { sayWithPlace } from '../../core/findings/say';
 import type { OpenPairings } from '../editors/openPairings';
 import { nameOf } from '../files/relativePath';
 import { plainNotice } from '../plainNotice';
+import { dictionary } from '../translated';
 import type { Beside } from './beside';
 import { committedText } from './committedText';
 import { comparisonText, type Side } from './comparisonText';
@@ -49,7 +50,7 @@ export class Comparison implements vscode.TextDocumentContentProvider {
       return;
     }
     try {
-      const text = comparisonText(nameOf(taps.path), ...sides, presentPalette(), vscode.l10n.t);
+      const text = comparisonText(nameOf(taps.path), ...sides, presentPalette(), vscode.l10n.t, dictionary());
       await this.open(nameOf(taps.path), document, text);
     } catch (error) {
       if (!(error instanceof Refusal)) throw error;

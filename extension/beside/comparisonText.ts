@@ -5,9 +5,11 @@ import { grouped, noFigure } from '../../core/figures/numbers';
 import { frequency } from '../../core/figures/units';
 import { readTaps, type TapsFile } from '../../core/files/readTaps';
 import { type TapsFigures, tapsFigures } from '../../core/files/tapsFigures';
+import type { Dictionary } from '../../core/findings/translate';
+import { translatedPhrase } from '../../core/findings/translatePhrase';
 import { bullets, name, plain, table } from '../../core/note/markdown';
 import type { Palette } from '../../core/note/pictures/palettes';
-import { mostLines, tapsPicture } from '../../core/note/pictures/tapsPicture';
+import { tapsPicture } from '../../core/note/pictures/tapsPicture';
 import { base64Of } from './base64';
 import type { Translate } from './words';
 
@@ -19,8 +21,12 @@ export interface Side {
   text: string;
 }
 
+/** Pictures drawn at most, one an input. */
+const mostPictures = 8;
+
 /**
  * Two written filters side by side, as Markdown.
+ * @param dictionary translations of what `core` says, by its English
  * @throws Refusal where one is no taps file that this version can read
  */
 export function comparisonText(
@@ -29,6 +35,7 @@ export function comparisonText(
   after: Side,
   palette: Palette,
   t: Translate,
+  dictionary: Dictionary = {},
 ): string {
   const [old, now] = [before, after].map(({ text }) => ({
     taps: readTaps(text, file),
@@ -40,11 +47,14 @@ export function comparisonText(
     ? [t('The filters have other numbers of inputs.')]
     : change === null
       ? [t('The taps are the same.')]
-      : [...changeInWords(change).map(plain), ...origins(change, t)];
+      : [
+          ...changeInWords(change).map((text) => plain(translatedPhrase(text, dictionary))),
+          ...origins(change, t),
+        ];
   const figures = figureRows(old, now, t);
   return [
     `# ${t('Taps of {0}', name(file))}`,
-    picture(old.taps, now.taps, before, after, palette, t),
+    ...pictures(old.taps, now.taps, before, after, palette, t),
     bullets(said),
     table([t('Figure'), plain(before.label), plain(after.label)], figures, [
       plain(before.label),
@@ -65,22 +75,25 @@ function origins({ documentChanged, recordingsChanged }: Change, t: Translate): 
   return said.length > 0 ? said : [t('Document and recordings are the same.')];
 }
 
-/** One plot of both, each input's lines together, where they meet the same sample of the desired signal. */
-function picture(
+/** For each input one plot of both, where they meet the same sample of the desired signal. */
+function pictures(
   old: TapsFile,
   now: TapsFile,
   before: Side,
   after: Side,
   palette: Palette,
   t: Translate,
-): string {
-  const inputs = Math.min(old.inputs.length, now.inputs.length, mostLines / 2);
-  const lines = Array.from({ length: inputs }, (_, r) => [
-    { label: `${old.inputs[r]} ${before.label}`, taps: old.coefficients[r], first: -old.delay },
-    { label: `${now.inputs[r]} ${after.label}`, taps: now.coefficients[r], first: -now.delay },
-  ]).flat();
-  const svg = base64Of(tapsPicture(lines, now.sampleRate, palette));
-  return `![${plain(t('Impulse response and magnitude response of both'))}](data:image/svg+xml;base64,${svg})`;
+): string[] {
+  const inputs = Math.min(old.inputs.length, now.inputs.length, mostPictures);
+  const says = plain(t('Impulse response and magnitude response of both'));
+  return Array.from({ length: inputs }, (_, r) => {
+    const lines = [
+      { label: `${old.inputs[r]}, ${before.label}`, taps: old.coefficients[r], first: -old.delay },
+      { label: `${now.inputs[r]}, ${after.label}`, taps: now.coefficients[r], first: -now.delay },
+    ];
+    const svg = base64Of(tapsPicture(lines, now.sampleRate, palette));
+    return `![${says}: ${plain(now.inputs[r])}](data:image/svg+xml;base64,${svg})`;
+  });
 }
 
 interface Read {

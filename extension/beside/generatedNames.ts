@@ -24,7 +24,7 @@ const parts = ['taps', 'input', 'expected', 'filter', 'vectors'];
  * @param word under the pointer
  * @param before text of the line before the word
  * @param known all symbols of the workspace
- * @param text of the whole file
+ * @param text of the whole file, its own name before it
  */
 export function symbolsOf(
   word: string,

@@ -26,17 +26,17 @@ export class ArrayHover implements vscode.HoverProvider {
     if (range === undefined) return undefined;
     const word = document.getText(range);
     const before = document.getText(new vscode.Range(range.start.with(undefined, 0), range.start));
-    const symbols = (known: Iterable<string>) =>
-      symbolsOf(word, before, known, () => document.getText(), document.languageId);
+    // A generated file names its symbol nowhere but in its own name, in Rust.
+    const text = () => `${nameOf(document.uri.path)}\n${document.getText()}`;
+    const symbols = (known: Iterable<string>) => symbolsOf(word, before, known, text, document.languageId);
     const own = this.fromPairing(document, symbols);
     if (own !== null) return this.hover(own, range);
     // Most words are none of ours: no file is looked for on their account.
     if (!/_(taps|input|expected)$/.test(word) && !/^[A-Z][A-Z0-9_]*$/.test(word)) return undefined;
     const stray = await this.stray.bySymbol();
     const found = symbols(stray.keys()).flatMap((symbol) => stray.get(symbol) ?? []);
-    return found.length === 0
-      ? undefined
-      : this.hover({ taps: found[0], standing: null, pairing: null }, range);
+    const standing = vscode.l10n.t('its pairing document is not in this workspace, or cannot be read');
+    return found.length === 0 ? undefined : this.hover({ taps: found[0], standing, pairing: null }, range);
   }
 
   /** Of a pairing of the workspace: the file's own where it is a written one, otherwise the nearest of that name. */
@@ -57,7 +57,7 @@ export class ArrayHover implements vscode.HoverProvider {
   }
 
   private async hover(
-    { taps, standing, pairing }: { taps: vscode.Uri; standing: string | null; pairing: string | null },
+    { taps, standing, pairing }: { taps: vscode.Uri; standing: string; pairing: string | null },
     range: vscode.Range,
   ): Promise<vscode.Hover | undefined> {
     const picture = vscode.workspace.getConfiguration('tapwright', taps).get('hover.picture', true);

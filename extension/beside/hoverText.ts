@@ -15,8 +15,8 @@ export const longestHover = 100_000;
 export interface HoverOptions {
   /** Null: no picture. */
   palette: Palette | null;
-  /** In words; null where it is not known. */
-  standing: string | null;
+  /** In words. */
+  standing: string;
   /** Target of a link that opens the document; null: none. */
   link: string | null;
   t: Translate;
@@ -45,7 +45,7 @@ export function hoverText(text: string, file: string, options: HoverOptions): st
     row(t('Filter'), plain(`${inputs}, ${frequency(taps.sampleRate)}`)),
     row(t('Cost'), plain(costInWords(figures, t))),
     row(t('Made from'), link === null ? document : `[${document}](${link})`),
-    ...(standing === null ? [] : [row(t('State'), plain(standing))]),
+    row(t('State'), plain(standing)),
   ].join('  \n');
   const heading = `**${plain(figures.title ?? taps.document.file)}**  \n${figuresLine}`;
   const said = [heading, rows].join('\n\n');

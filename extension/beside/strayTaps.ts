@@ -12,7 +12,8 @@ export class StrayTaps {
 
   constructor(private readonly beside: Beside) {
     this.heard = beside.onDidChange((entry) => {
-      if (entry === null) this.found = null;
+      // Of a pairing that is gone, or cannot be read, the taps files may have stayed.
+      if (entry === null || entry.view?.symbol == null) this.found = null;
     });
   }
 
@@ -26,6 +27,7 @@ export class StrayTaps {
   }
 
   private async find(): Promise<Map<string, vscode.Uri>> {
+    await this.beside.found();
     const bySymbol = new Map<string, vscode.Uri>();
     for (const uri of await vscode.workspace.findFiles('**/*.taps.json', passedOver, mostFiles)) {
       const address = this.beside.addressOf(uri);

@@ -138,6 +138,10 @@ export class Pairing {
       const outcome = await writeDesign(this.services.platform, this.spot, files);
       // Together with what a watcher sees of it, and also where nothing is watched.
       this.watch.soon();
+      // Ends a step of the walkthrough, by whatever button the files were written.
+      if (outcome.findings.length === 0) {
+        void vscode.commands.executeCommand('setContext', 'tapwright.filesWritten', true);
+      }
       return outcome;
     });
   }

@@ -32,6 +32,8 @@ class OpenRecording implements vscode.CustomDocument {
     };
     this.watcher.onDidChange(heard);
     this.watcher.onDidCreate(heard);
+    // Reading it again then says that it is gone.
+    this.watcher.onDidDelete(heard);
     this.begin();
   }
 

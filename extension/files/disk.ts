@@ -20,9 +20,11 @@ export interface Disk {
   makeFolder(path: string): Promise<void>;
   /** A path beside the given one, for a file that is to take its place. */
   beside(path: string): string;
+  /** Removes what writers that were killed left beside a path, as far as the disk can tell that they are gone. */
+  tidy(path: string): Promise<void>;
   /** Writes a whole file, and as far as the disk can do so makes sure that it lasts. */
   write(path: string, bytes: Uint8Array): Promise<void>;
-  /** Puts a file in the place of another, which is old or new and never between. */
+  /** Puts a file in the place of another, which is old or new and never between as far as the disk can do so. */
   rename(from: string, to: string): Promise<void>;
   /** No complaint where there is none. */
   remove(path: string): Promise<void>;

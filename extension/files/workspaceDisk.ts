@@ -7,7 +7,9 @@ let lastTemporary = 0;
 
 /**
  * The workbench's file systems, for writing where the local disk is not to be had. They have no way to make sure that
- * bytes last beyond a loss of power; a rename puts the whole file in place all the same.
+ * bytes last beyond a loss of power. The workbench deletes what a rename would replace, which closes its editors and
+ * leaves a moment without the file, or for good where the rename then fails. So a file that is there already is written
+ * over, as saving it in an editor would; by then its new bytes are known to find room.
  * @param root nothing may leave it
  * @param folder the document's
  */
@@ -21,7 +23,7 @@ export function workspaceDisk(root: vscode.Uri, folder: vscode.Uri): Disk {
       throw error instanceof vscode.FileSystemError ? new DiskError(error.code, path) : error;
     }
   };
-  return {
+  const disk: Disk = {
     async staysInside(path) {
       const fromRoot = pathBelow(root.path, at(path).path);
       if (fromRoot === null) return false;
@@ -39,8 +41,14 @@ export function workspaceDisk(root: vscode.Uri, folder: vscode.Uri): Disk {
     read: async (path) => new Uint8Array(await told(path, fs.readFile(at(path)))),
     makeFolder: (path) => told(path, fs.createDirectory(at(path))),
     beside: (path) => `${path}.${++lastTemporary}.tmp`,
+    // Nothing tells whether another window is at work; names are used again, so that little is left.
+    async tidy() {},
     write: (path, bytes) => told(path, fs.writeFile(at(path), bytes)),
-    rename: (from, to) => told(to, fs.rename(at(from), at(to), { overwrite: true })),
+    async rename(from, to) {
+      if ((await disk.stat(to)) === 'missing') return told(to, fs.rename(at(from), at(to)));
+      await disk.write(to, await disk.read(from));
+      await disk.remove(from);
+    },
     async remove(path) {
       try {
         await fs.delete(at(path), { useTrash: false });
@@ -49,4 +57,5 @@ export function workspaceDisk(root: vscode.Uri, folder: vscode.Uri): Disk {
       }
     },
   };
+  return disk;
 }

@@ -36,7 +36,8 @@ export async function writeAll(disk: Disk, files: readonly NewFile[]): Promise<W
     for (const [i, { path, bytes }] of files.entries()) {
       if (changes[i].change === 'unchanged') continue;
       await disk.makeFolder(folderOf(path));
-      const temporary = disk.beside(path);
+      const temporary = await freeBeside(disk, path);
+      if (temporary === null) return { files: [], findings: [finding('outside-root', {}, { file: path })] };
       waiting.push({ temporary, target: path });
       await disk.write(temporary, bytes);
     }
@@ -48,9 +49,31 @@ export async function writeAll(disk: Disk, files: readonly NewFile[]): Promise<W
       findings: [finding('not-writable', { error: error.code }, { file: error.path ?? '.' })],
     };
   } finally {
-    for (const { temporary } of waiting) await disk.remove(temporary);
+    for (const { temporary } of waiting) await tried(disk.remove(temporary));
   }
+  for (const { path } of files) await tried(disk.tidy(path));
   return { files: changes, findings: [] };
+}
+
+/** Links that may lie in the place of a file to be written; more are no accident. */
+const mostLinks = 100;
+
+/** A path beside the target that no link takes elsewhere, such as one that somebody laid there before. */
+async function freeBeside(disk: Disk, path: string): Promise<string | null> {
+  for (let i = 0; i <= mostLinks; i++) {
+    const temporary = disk.beside(path);
+    if (await disk.staysInside(temporary)) return temporary;
+  }
+  return null;
+}
+
+/** What is only tidying must not hide how the writing went. */
+async function tried(work: Promise<void>): Promise<void> {
+  try {
+    await work;
+  } catch (error) {
+    if (!(error instanceof DiskError)) throw error;
+  }
 }
 
 async function compare(

@@ -4,5 +4,6 @@ import { flows } from './support/flows';
 import { workbenchIsHere } from './support/programs';
 
 describe.skipIf(!workbenchIsHere())('beside the code, in a real workbench', () => {
-  besideFlows(flows());
+  // Drawn as text, a terminal can be read.
+  besideFlows(flows({ settings: { 'terminal.integrated.gpuAcceleration': 'off' } }));
 });

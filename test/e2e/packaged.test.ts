@@ -21,7 +21,8 @@ import { TextEditor } from './support/textEditor';
 import { tryTwice } from './support/tryTwice';
 import { until } from './support/until';
 
-// The package as a user has it: installed from its file into a workbench with a Node extension host, on real files.
+// The package as a user has it: installed from its file into a workbench with a Node extension host, on real files that
+// Git keeps.
 
 const packages = chromium() === null ? noBrowser() : serverPackages();
 
@@ -45,6 +46,24 @@ interface Opened {
   folder: string;
 }
 
+function withoutGit(files: ReturnType<typeof snapshot>): ReturnType<typeof snapshot> {
+  return Object.fromEntries(Object.entries(files).filter(([path]) => !path.startsWith('.git/')));
+}
+
+/** Text of the comparison once both of its pictures are drawn and nothing of it is held back; null before. */
+async function comparison(page: Page): Promise<string | null> {
+  const drawn = `(() => {
+    const pictures = [...document.images].filter(({ src }) => src.startsWith('data:image/svg'));
+    const whole = pictures.length === 2 && pictures.every(({ naturalWidth }) => naturalWidth === 460);
+    return whole && document.getElementById('code-csp-warning') === null ? document.body.innerText : null;
+  })()`;
+  for (const frame of page.frames()) {
+    const said = await frame.evaluate<string | null>(drawn).catch(() => null);
+    if (said !== null) return said;
+  }
+  return null;
+}
+
 describe.skipIf(packages === null)('the installed package', () => {
   let browser: Browser;
   let made: UnpackedPackage;
@@ -63,6 +82,7 @@ describe.skipIf(packages === null)('the installed package', () => {
   async function open(): Promise<Opened> {
     const folder = mkdtempSync(join(tmpdir(), 'tapwright-installed-'));
     cpSync(join(project, 'media', 'bench'), folder, { recursive: true });
+    designAndCommit(folder);
     const server = await ServerWorkbench.start(packages as string, made.vsix);
     const context = await browser.newContext({ viewport: { width: 1400, height: 1000 }, locale: 'en-US' });
     // The server, its extension host and the browser start on the same processors.
@@ -70,6 +90,24 @@ describe.skipIf(packages === null)('the installed package', () => {
     opened = { server, folder, page: await context.newPage() };
     await opened.page.goto(server.address(folder), { timeout: 60_000 });
     return opened;
+  }
+
+  function designIn(folder: string): void {
+    const commandLine = join(made.extension, 'dist', 'cli.js');
+    execFileSync(process.execPath, [commandLine, 'design', 'belt.pairing.json'], {
+      cwd: folder,
+      stdio: 'pipe',
+    });
+  }
+
+  /** What the firmware's repository had before. */
+  function designAndCommit(folder: string): void {
+    designIn(folder);
+    const git = (...words: string[]) => execFileSync('git', words, { cwd: folder, stdio: 'pipe' });
+    const settings = ['user.name=bench', 'user.email=bench@bench.invalid', 'commit.gpgsign=false'];
+    git('init', '--quiet');
+    git('add', '.');
+    git(...settings.flatMap((one) => ['-c', one]), 'commit', '--quiet', '--message=bench');
   }
 
   async function close(): Promise<void> {
@@ -120,26 +158,33 @@ describe.skipIf(packages === null)('the installed package', () => {
     await palette.run('File: Save');
     const document = join(folder, 'belt.pairing.json');
     await until('the length in the document', () => readFileSync(document, 'utf8').includes('"length": 24'));
+    const taps = join(folder, 'generated', 'belt.taps.json');
+    const committed = readFileSync(taps, 'utf8');
     await frame.button('Write files').click();
-    await until('the files', () => Object.keys(snapshot(folder)).includes('generated/belt.taps.json'));
+    await until('other files', () => readFileSync(taps, 'utf8') !== committed);
 
     // The same document by the command line of the package.
     const other = mkdtempSync(join(tmpdir(), 'tapwright-installed-'));
     cpSync(join(project, 'media', 'bench'), other, { recursive: true });
     writeFileSync(join(other, 'belt.pairing.json'), readFileSync(document));
-    const commandLine = join(made.extension, 'dist', 'cli.js');
-    execFileSync(process.execPath, [commandLine, 'design', 'belt.pairing.json'], {
-      cwd: other,
-      stdio: 'pipe',
-    });
-    const files = snapshot(folder);
+    designIn(other);
+    const files = withoutGit(snapshot(folder));
     expect(Object.keys(files).filter((path) => path.startsWith('generated/')).length).toBeGreaterThan(5);
     expect(files).toEqual(snapshot(other));
     rmSync(other, { recursive: true });
+
+    await palette.run(titleOf('tapwright.compare'));
+    const said = await until('the comparison', () => comparison(page));
+    expect(said).toContain('length 64 to 24');
+    expect(said).toMatch(/last commit\s+written/);
+    const [then, now] = [committed, readFileSync(taps, 'utf8')].map(
+      (text) => JSON.parse(text).heldOut.nmseDb,
+    );
+    expect(said).toMatch(new RegExp(`Held-out NMSE\\s+${then.toFixed(2)} dB\\s+${now.toFixed(2)} dB`));
     await close();
   }
 
-  it('designs and writes what its command line does, byte for byte', async () => {
+  it('designs and writes what its command line does, byte for byte, and compares it with the last commit', async () => {
     await tryTwice('the installed package', changeAndWrite, afterFailure, new SecondTries());
   }, 600_000);
 });

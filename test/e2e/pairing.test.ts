@@ -5,6 +5,7 @@ import { formFlows } from './flows/form';
 import { keyboardFlows } from './flows/keyboard';
 import { recordingFlows } from './flows/recordings';
 import { resultFlows } from './flows/result';
+import { walkthroughFlows } from './flows/walkthrough';
 import { writingFlows } from './flows/writing';
 import { flows } from './support/flows';
 import { workbenchIsHere } from './support/programs';
@@ -12,6 +13,7 @@ import { workbenchIsHere } from './support/programs';
 // One workbench for all of them: starting one takes longer than most flows.
 describe.skipIf(!workbenchIsHere())('in a real workbench', () => {
   const flow = flows();
+  walkthroughFlows(flow);
   formFlows(flow);
   documentFlows(flow);
   writingFlows(flow);

@@ -1,7 +1,9 @@
+import { rmSync } from 'node:fs';
+import { join } from 'node:path';
 import { expect } from 'vitest';
 import type { Flow } from '../support/flows';
 import { heldOutShown } from '../support/heldOut';
-import { menuTitleOf, titleOf } from '../support/manifest';
+import { menuTitleOf } from '../support/manifest';
 import { monoWav, npyOf } from '../support/sampleFiles';
 import { until } from '../support/until';
 import type { Workbench } from '../support/workbench';
@@ -66,16 +68,11 @@ export function recordingFlows(flow: Flow): void {
     workbench.files.write('shaker.npy', npyOf(reference));
     await workbench.explorer.waitFor('shaker.npy');
     const page = await workbench.openPage('shaker.npy');
-    await until('its size', async () => /4[,.\u202f\u00a0 ]?000/.test(await page.text()));
-  });
-
-  flow('copies the sample bench into a folder and opens it', async (workbench) => {
-    await workbench.palette.run(titleOf('tapwright.openSampleBench'));
-    await workbench.palette.press('OK');
-    const copied = 'tapwright-bench/belt.pairing.json';
-    await until('its page', () => workbench.frame.isThere());
-    await until('its figure', async () => (await heldOutShown(workbench.frame)) !== null);
-    expect(workbench.files.read(copied)).toBe(workbench.files.read('belt.pairing.json'));
-    expect(workbench.files.bytes('tapwright-bench/tubing.wav')).toEqual(workbench.files.bytes('tubing.wav'));
+    const size = /4[,.\u202f\u00a0 ]?000/;
+    await until('its size', async () => size.test(await page.text()));
+    rmSync(join(workbench.files.path, 'shaker.npy'));
+    await until('that it is gone', async () => (await page.text()).includes('The file is no longer there'));
+    workbench.files.write('shaker.npy', npyOf(reference));
+    await until('its size again', async () => size.test(await page.text()));
   });
 }

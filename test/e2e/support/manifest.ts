@@ -34,3 +34,10 @@ export function titleOf(id: string): string {
 export function menuTitleOf(id: string): string {
   return told(commandOf(id).title);
 }
+
+/** The walkthrough's title, and those of its steps by their names. */
+export function walkthrough(): { title: string; steps: Record<string, string> } {
+  const [{ title, steps }] = json('package.json').contributes.walkthroughs;
+  const titles = steps.map((step: { id: string; title: string }) => [step.id, told(step.title)]);
+  return { title: told(title), steps: Object.fromEntries(titles) };
+}

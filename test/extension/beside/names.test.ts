@@ -72,6 +72,7 @@ describe('the symbol of a word', () => {
     ]);
     expect(of('belt_taps', rust)).toEqual(['belt']);
     expect(of('TAPS', { ...rust, text: 'static TAPS: [i16; 4]' })).toEqual([]);
+    expect(of('TAPS', { ...rust, text: 'belt_taps.rs\npub static TAPS: [i16; 4]' })).toEqual(['belt']);
     expect(of('LENGTH', { ...rust, text: 'mod belt_taps;' })).toEqual([]);
   });
 });

@@ -1,4 +1,7 @@
 import { describe, expect, it } from 'vitest';
+import { finding } from '../../../core/findings/finding';
+import { problemLine } from '../../../core/findings/problemLine';
+import { findingView } from '../../../core/view/findingView';
 import { fixesOf } from '../../../extension/beside/fixesOf';
 import { problemsOf } from '../../../extension/beside/problemsOf';
 import { problemText } from '../../../extension/beside/problemText';
@@ -169,7 +172,26 @@ describe('a finding as a line', () => {
     );
     expect(
       at({ severity: 'caution', code: 'clipped', file: 'slow.csv', place: 'slow.csv', text: 'flat' }),
-    ).toBe('fir/slow.csv:1:1: warning: slow.csv: flat [clipped]');
+    ).toBe('fir/slow.csv:1:1: warning: flat [clipped]');
     expect(at({ severity: 'note', file: 'a\nb.csv' })).toMatch(/^fir\/a\\u000ab\.csv:1:1: note: /);
+  });
+
+  it('is the line that the command line prints', () => {
+    const text = '{\n  "job": "cancel"\n}';
+    const places = [
+      {},
+      { path: ['job'] },
+      { path: ['job'], file: 'slow.csv', channel: 'cell' },
+      { file: 'slow.csv' },
+      { file: 'slow.csv', line: 7 },
+      { file: 'slow, 1\n.csv', channel: 'cell', from: 100, to: 140 },
+      { file: 'slow.csv', line: 7, take: 'fast', channel: 'line 3', from: 1 },
+    ];
+    for (const place of places) {
+      const found = finding('missing-file', {}, place);
+      expect(problemText(findingView(found, text), 'belt.pairing.json')).toBe(
+        problemLine(found, 'belt.pairing.json', text),
+      );
+    }
   });
 });

@@ -1,3 +1,5 @@
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { designFiles } from '../../../core/files/designFiles';
 import { palettes } from '../../../core/note/pictures/palettes';
@@ -8,6 +10,8 @@ import { english } from '../../../extension/beside/words';
 import { hostileNames } from '../../support/hostileNames';
 import { nodeSha256 } from '../../support/nodeSha256';
 import { type SampleOptions, sampleResult } from '../../support/sampleResult';
+
+const german = JSON.parse(readFileSync(join(__dirname, '../../../media/l10n/bundle.l10n.de.json'), 'utf8'));
 
 const tapsOf = (options: SampleOptions = {}) =>
   new TextDecoder().decode(designFiles(sampleResult(options), nodeSha256).at(-1)!.bytes);
@@ -73,12 +77,11 @@ describe('the hover', () => {
     file.cost = 3;
     delete file.title;
     file.write = null;
-    const said = hoverText(JSON.stringify(file), 'x', { ...options, standing: null, link: null });
+    const said = hoverText(JSON.stringify(file), 'x', { ...options, link: null });
     expect(said).toContain('Held-out NMSE **–**');
     expect(said).toContain('Attainable limit **withheld**');
     expect(said).toContain('Format: float32');
     expect(said).toContain('Cost: –');
-    expect(said).not.toContain('State');
   });
 });
 
@@ -91,13 +94,14 @@ describe('base64', () => {
 });
 
 describe('the comparison', () => {
-  const compare = (before: string, after: string) =>
+  const compare = (before: string, after: string, dictionary = {}) =>
     comparisonText(
       'belt.taps.json',
       { label: 'last commit', text: before },
       { label: 'written', text: after },
       palettes.light,
       english,
+      dictionary,
     );
 
   it('says that the taps are the same', () => {
@@ -114,8 +118,20 @@ describe('the comparison', () => {
     expect(said).toContain('Recordings that are others: `slow.csv`');
     const { nmseDb } = JSON.parse(before).heldOut;
     expect(said).toContain(`| Held-out NMSE | ${nmseDb.toFixed(2)} dB | -12.34 dB |`);
-    const svg = Buffer.from(/base64,([^)]+)\)/.exec(said)![1], 'base64').toString();
-    for (const label of ['frame_x last', 'frame_z writ']) expect(svg).toContain(label);
+    const pictures = [...said.matchAll(/base64,([^)]+)\)/g)].map(([, svg]) => Buffer.from(svg, 'base64'));
+    for (const [r, input] of ['frame_x', 'frame_z'].entries()) {
+      expect(`${pictures[r]}`).toContain(`${input}, last commit`);
+      expect(`${pictures[r]}`).toContain(`${input}, written`);
+    }
+  });
+
+  it('is told in the language of the editor', () => {
+    const after = JSON.parse(tapsOf());
+    after.coefficients[1][9] += 0.25;
+    after.heldOut.nmseDb = -12.34;
+    const said = compare(tapsOf(), JSON.stringify(after), german);
+    expect(said).toMatch(/Koeffizienten um .* ihrer Größe, am meisten w&#91;9&#93; von frame_z: von .* auf /);
+    expect(said).toMatch(/Frequenzgang um höchstens .* dB bei .*; zurückgehalten von .* auf -12\.34 dB/);
   });
 
   it('refuses what is no taps file, and does not compare other numbers of inputs', () => {

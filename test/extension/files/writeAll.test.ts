@@ -24,6 +24,7 @@ function newDisk(start: Record<string, Uint8Array> = {}) {
     },
     async makeFolder() {},
     beside: (path) => `${path}.tmp`,
+    async tidy() {},
     async write(path, content) {
       may('write', path);
       files.set(path, content);
@@ -55,6 +56,22 @@ describe('writing a design', () => {
     expect(written.map(({ change }) => change)).toEqual(['new', 'new', 'new']);
     expect(renamed).toEqual(design('').map(({ path }) => path));
     expect([...files.keys()].sort()).toEqual([...renamed].sort());
+  });
+
+  it('writes over no link beside its target, and gives up where there are too many', async () => {
+    const { disk, files } = newDisk();
+    let [names, links] = [0, 2];
+    const linked: Disk = {
+      ...disk,
+      beside: (path) => `${path}.${++names}.tmp`,
+      staysInside: async (path) => !path.endsWith('.tmp') || names > links,
+    };
+    expect((await writeAll(linked, design('one').slice(0, 1))).findings).toEqual([]);
+    expect([names, [...files.keys()]]).toEqual([3, ['out/belt_taps.h']]);
+    links = Number.POSITIVE_INFINITY;
+    const { findings } = await writeAll(linked, design('two'));
+    expect(findings.map(({ code }) => code)).toEqual(['outside-root']);
+    expect(files.get('out/belt_taps.h')).toEqual(ours('one'));
   });
 
   it('touches only what changed', async () => {
