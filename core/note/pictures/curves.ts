@@ -1,4 +1,3 @@
-import { line } from 'd3-shape';
 import type { Plot } from './plot';
 import { coordinate, ink, shortened, width, xmlText } from './svg';
 
@@ -24,13 +23,21 @@ export function fillOf(index: number): string {
 
 /** The curve as a path; long ones are reduced to the lowest and the highest value of each column. */
 export function curvePath(plot: Plot, curve: Curve, index: number): string {
-  const path = line<number>()
-    .digits(2)
-    .defined((i) => Number.isFinite(curve.y[i]))
-    .x((i) => plot.x(curve.x[i]))
-    .y((i) => plot.y(curve.y[i]));
-  const d = path(shownIndices(curve.y, plot.right - plot.left)) ?? '';
+  const shown = shownIndices(curve.y, plot.right - plot.left);
+  const d = brokenLine(shown.map((i): [number, number] => [plot.x(curve.x[i]), plot.y(curve.y[i])]));
   return `<path d="${d}" fill="none" stroke-width="1.5" stroke-linejoin="round" ${strokeOf(index)}/>`;
+}
+
+/** The data of a path through points; it breaks where one is not finite. */
+export function brokenLine(points: readonly [number, number][]): string {
+  let path = '';
+  let open = false;
+  for (const [x, y] of points) {
+    const finite = Number.isFinite(y);
+    if (finite) path += `${open ? 'L' : 'M'}${coordinate(x)},${coordinate(y)}`;
+    open = finite;
+  }
+  return path;
 }
 
 /** The lowest and the highest value of each column, where there are more than two a column. */

@@ -1,4 +1,4 @@
-import { type ScaleLinear, scaleLinear } from 'd3-scale';
+import { type LinearScale, linearScale } from './linearScale';
 import { coordinate, faintInk, ink, width, xmlText } from './svg';
 
 /** A rectangle with two linear scales. */
@@ -7,8 +7,8 @@ export interface Plot {
   right: number;
   top: number;
   bottom: number;
-  x: ScaleLinear<number, number>;
-  y: ScaleLinear<number, number>;
+  x: LinearScale;
+  y: LinearScale;
 }
 
 const left = 76;
@@ -25,8 +25,8 @@ export function newPlot(top: number, height: number, x: [number, number], y: [nu
     right,
     top,
     bottom,
-    x: scaleLinear(nonEmpty(x), [left, right]),
-    y: scaleLinear(nonEmpty(y), [bottom, top]).nice(ticksFor(height)),
+    x: linearScale(nonEmpty(x), [left, right]),
+    y: linearScale(nonEmpty(y), [bottom, top], ticksFor(height)),
   };
 }
 
@@ -41,7 +41,7 @@ function ticksFor(height: number): number {
 /** Very small and very large values with an exponent, so that they fit beside the plot. */
 function labels(scale: Plot['y'], count: number): (value: number) => string {
   const size = Math.max(...scale.domain().map(Math.abs));
-  return size < 1e-2 || size >= 1e5 ? scale.tickFormat(count, '~e') : scale.tickFormat(count);
+  return size < 1e-2 || size >= 1e5 ? scale.tickLabel(count, 'exponent') : scale.tickLabel(count);
 }
 
 /** A place on an axis and what stands there. */
@@ -85,6 +85,6 @@ export function axes(
 }
 
 function roundTicks(x: Plot['x'], count: number): Tick[] {
-  const label = x.tickFormat(count);
+  const label = x.tickLabel(count);
   return x.ticks(count).map((at) => ({ at, label: label(at) }));
 }

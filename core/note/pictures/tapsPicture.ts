@@ -1,7 +1,7 @@
-import { scaleLinear } from 'd3-scale';
 import { frequencyResponse, magnitudeDecibels } from '../../figures/frequencyResponse';
-import { shownIndices } from './curves';
+import { brokenLine, shownIndices } from './curves';
 import { decibelRange, frequencyUnit, raised } from './frequencyAxis';
+import { type LinearScale, linearScale } from './linearScale';
 import type { Palette } from './palettes';
 import { coordinate, shortened, xmlText } from './svg';
 
@@ -63,8 +63,8 @@ function stroke(index: number, { lines }: Palette): string {
 interface Panel {
   left: number;
   right: number;
-  x: ReturnType<typeof scaleLinear<number, number>>;
-  y: ReturnType<typeof scaleLinear<number, number>>;
+  x: LinearScale;
+  y: LinearScale;
 }
 
 /** Beyond this the height of a plot is more than a double can hold. */
@@ -76,8 +76,8 @@ function panel(left: number, right: number, x: [number, number], y: [number, num
   return {
     left,
     right,
-    x: scaleLinear(x, [left, right]),
-    y: scaleLinear([low, high], [bottom, top]).nice(4),
+    x: linearScale(x, [left, right]),
+    y: linearScale([low, high], [bottom, top], 4),
   };
 }
 
@@ -85,8 +85,8 @@ function axes({ left, right, x, y }: Panel, title: string, palette: Palette): st
   const across = x.ticks(4);
   const up = y.ticks(4);
   const size = Math.max(...y.domain().map(Math.abs));
-  const yLabel = size < 1e-2 || size >= 1e4 ? y.tickFormat(4, '~e') : y.tickFormat(4);
-  const xLabel = x.tickFormat(4);
+  const yLabel = size < 1e-2 || size >= 1e4 ? y.tickLabel(4, 'exponent') : y.tickLabel(4);
+  const xLabel = x.tickLabel(4);
   const at = (value: number) => coordinate(value);
   return [
     `<path d="${[...across.map((v) => `M${at(x(v))},${top}V${bottom}`), ...up.map((v) => `M${left},${at(y(v))}H${right}`)].join('')}" stroke="${palette.grid}" stroke-width="0.75" fill="none"/>`,
@@ -145,13 +145,8 @@ function magnitude(lines: readonly TapsLine[], sampleRate: number, palette: Pale
 }
 
 function curve(place: Panel, x: Float64Array, y: Float64Array, index: number, palette: Palette): string {
-  let d = '';
-  for (const i of shownIndices(y, place.right - place.left)) {
-    const [px, py] = [place.x(x[i]), place.y(y[i])];
-    // The line breaks where a value is beyond what a double can hold.
-    if (Number.isFinite(py))
-      d += `${d === '' || d.endsWith(' ') ? 'M' : 'L'}${coordinate(px)},${coordinate(py)}`;
-    else if (d !== '' && !d.endsWith(' ')) d += ' ';
-  }
+  const d = brokenLine(
+    shownIndices(y, place.right - place.left).map((i): [number, number] => [place.x(x[i]), place.y(y[i])]),
+  );
   return `<path d="${d}" fill="none" stroke-width="1.5" stroke-linejoin="round" ${stroke(index, palette)}/>`;
 }
