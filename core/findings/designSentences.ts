@@ -18,6 +18,14 @@ export const designSentences = table({
     severity: 'blocker',
     says: 'got {unknowns} taps in all when expected at most {limit}. Shorten the filter.',
   },
+  'too-many-mirrored': {
+    severity: 'blocker',
+    says: 'got {unknowns} taps in all when expected at most {limit} where taps mirror each other: their matrix has to be formed. Shorten the filter or leave out "symmetry".',
+  },
+  'too-many-stretches': {
+    severity: 'blocker',
+    says: 'got {unknowns} taps in all and {stretches} stretches of usable samples when expected at most {limit} taps or {most} stretches. Shorten the filter, join fit intervals or set "windowing" to "autocorrelation".',
+  },
   silent: {
     severity: 'blocker',
     says: 'the signal is constant over the fit intervals, so that no filter can be found from it. Check the channel and the cabling.',

@@ -156,6 +156,7 @@ export const phrases: readonly string[] = [
   'its upper edge, so close to half the sample rate,',
   'the matrix is singular to working accuracy from order {0}',
   'the condition number is {0}',
+  'conjugate gradients have not settled after {0} steps',
   'their sum is even in pairs, or the gain is no whole number of counts',
   'the gain is no whole number of counts',
   'at other frequencies than 0 Hz integers meet it only nearly',

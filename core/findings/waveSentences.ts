@@ -32,6 +32,6 @@ export const waveSentences = table({
   },
   'file-changed': {
     severity: 'blocker',
-    says: 'the file became shorter while it was read. Wait until its writer is done and start again.',
+    says: 'the file changed while it was read. Wait until its writer is done and start again.',
   },
 });

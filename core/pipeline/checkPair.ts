@@ -7,8 +7,14 @@ import { channelLabel } from '../recordings/recording';
 import { askedBand } from './askedBand';
 import type { Pairing } from './pairing';
 
-/** Unknowns above which the dense normal matrix would not fit in memory. */
-const mostUnknowns = 8192;
+/** Unknowns that recursions and conjugate gradients solve within seconds. */
+const mostUnknowns = 65_536;
+
+/** Unknowns up to which a normal matrix can be formed: 512 MB. */
+const mostDense = 8192;
+
+/** Stretches of a longer system: each takes two transforms in every step of conjugate gradients, and their memory. */
+const mostStretches = 32;
 
 /** Blockers that can be told before anything is computed. */
 export function checkPair(pairing: Pairing): Finding[] {
@@ -19,15 +25,10 @@ export function checkPair(pairing: Pairing): Finding[] {
   if (band !== null && 'severity' in band) findings.push(band);
   const history = band !== null && 'history' in band ? band.history : 0;
   const unknowns = length * takes[0].inputs.length;
-  if (unknowns > mostUnknowns) {
-    findings.push(
-      finding('too-many-taps', { unknowns, limit: mostUnknowns }, { path: ['filter', 'length'] }),
-    );
-  }
-  const samples = takes.reduce(
-    (sum, take) => sum + totalLength(usedSegments(take, take.fit, length, delay, history)),
-    0,
-  );
+  const used = takes.flatMap((take) => usedSegments(take, take.fit, length, delay, history));
+  const tooLong = checkSize(pairing, unknowns, used.length);
+  if (tooLong !== null) findings.push(tooLong);
+  const samples = totalLength(used);
   if (samples < unknowns) {
     findings.push(finding('too-few-samples', { samples, unknowns }, { path: ['filter', 'length'] }));
   }
@@ -43,6 +44,20 @@ export function checkPair(pairing: Pairing): Finding[] {
     }
   });
   return findings;
+}
+
+/** @param stretches of usable samples, which leave edges in the normal matrix with `covariance` windowing */
+function checkSize({ document }: Pairing, unknowns: number, stretches: number): Finding | null {
+  const place = { path: ['filter', 'length'] };
+  if (unknowns > mostUnknowns) return finding('too-many-taps', { unknowns, limit: mostUnknowns }, place);
+  if (unknowns <= mostDense) return null;
+  const { symmetry, windowing } = document.filter;
+  if (symmetry !== 'none') return finding('too-many-mirrored', { unknowns, limit: mostDense }, place);
+  if (windowing === 'covariance' && stretches > mostStretches) {
+    const values = { unknowns, stretches, limit: mostDense, most: mostStretches };
+    return finding('too-many-stretches', values, place);
+  }
+  return null;
 }
 
 /** Signals that are constant over the fit intervals. */

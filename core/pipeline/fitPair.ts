@@ -108,11 +108,14 @@ function held(
   });
 }
 
-function unsolvable({ order, conditionNumber, smallestRegularisation }: Unsolvable, regularisation: number) {
+function unsolvable(found: Unsolvable, regularisation: number) {
+  const { order, conditionNumber, steps, smallestRegularisation } = found;
   const why =
     order !== null
       ? `the matrix is singular to working accuracy from order ${order + 1}`
-      : `the condition number is ${Number(conditionNumber?.toPrecision(2))}`;
+      : steps !== null
+        ? `conjugate gradients have not settled after ${steps} steps`
+        : `the condition number is ${Number(conditionNumber?.toPrecision(2))}`;
   return finding(
     'unsolvable',
     { regularisation, why, smallest: smallestRegularisation },

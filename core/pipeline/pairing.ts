@@ -1,8 +1,10 @@
 import { sha256OfText } from '../bytes/sha256';
 import { documentMeaning } from '../document/canonicalJson';
+import { describe } from '../document/checks/describe';
 import type { PairingDocument } from '../document/pairingDocument';
+import { pathFault } from '../document/paths';
 import { readDocument } from '../document/readDocument';
-import { blocked, type Finding } from '../findings/finding';
+import { blocked, type Finding, finding } from '../findings/finding';
 import { resolveTakes } from '../pair/resolveTakes';
 import type { Take } from '../pair/take';
 import type { Host } from './host';
@@ -42,6 +44,7 @@ export interface ReadPairing {
 /** Reads, opens and resolves what a document names. */
 export async function readPairing(host: Host, text: string, place: DocumentPlace): Promise<ReadPairing> {
   const { document, findings } = readDocument(text);
+  findings.push(...nameFindings(place.file));
   if (document === null || blocked(findings)) {
     return { pairing: null, document, recordings: new Map(), takes: [], findings };
   }
@@ -55,4 +58,12 @@ export async function readPairing(host: Host, text: string, place: DocumentPlace
   const documentSha256 = sha256OfText(host.newSha256, documentMeaning(document));
   const pairing = { document, documentSha256, recordings: opened.byFile, takes, sampleRate };
   return { ...read, pairing };
+}
+
+/** Written files are named after the document and name each other by paths, which hold no such characters. */
+function nameFindings(file: string): Finding[] {
+  const fault = pathFault(`./${file}`, 'file');
+  if (fault !== 'control' && fault !== 'backslash') return [];
+  const code = fault === 'control' ? 'control-character' : 'path-backslash';
+  return [finding(code, { key: 'NAME.pairing.json', got: describe(file) }, { path: [] })];
 }

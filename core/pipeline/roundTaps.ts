@@ -8,7 +8,7 @@ import type { ShiftStructure } from '../solvers/displacement';
 import { unfold } from '../solvers/fold';
 import { normalOperator } from '../solvers/normalMultiply';
 import { elementsOf, type NormalSystem } from '../solvers/normalSystem';
-import { structuredDiagonal, structuredElements } from '../solvers/structuredElements';
+import { nearElements, structuredDiagonal, structuredElements } from '../solvers/structuredElements';
 import type { Fit } from './fitPair';
 
 /** Unknowns up to which a factor is computed for the rounding where the solver has none. */
@@ -35,6 +35,7 @@ export function tapRounder(fit: Fit, regularisation: number, scaling: Scaling, i
       : structuredElements(structure, regularisation);
   const multiply = structure && normalOperator(structure, regularisation);
   const diagonal = structure && structuredDiagonal(structure, regularisation);
+  const near = structure && nearElements(structure);
   let factor: Float64Array | null | undefined;
   return (fractionBits, word, rounding) => {
     const step = powerOfTwo(fractionBits);
@@ -56,12 +57,13 @@ export function tapRounder(fit: Fit, regularisation: number, scaling: Scaling, i
     const cost: RoundingCost = {
       size,
       element: aware ? (i, j) => units[i] * units[j] * bare(i, j) : (i, j) => (i === j ? 1 : 0),
-      ...(aware && multiply !== null && diagonal !== null
+      ...(aware && multiply !== null && diagonal !== null && near !== null
         ? {
             products: {
               diagonal: diagonal.map((value, i) => value * units[i] * units[i]),
               multiply: (v: Float64Array) =>
                 multiply(v.map((value, i) => value * units[i])).map((value, i) => value * units[i]),
+              near: (i: number, j: number) => units[i] * units[j] * near(i, j),
             },
           }
         : {}),

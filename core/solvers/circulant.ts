@@ -1,6 +1,6 @@
-import { newSpectrum } from '../statistics/blockSpectra';
-import { sizeFor, transformOf } from '../statistics/transform';
+import { sizeFor } from '../statistics/transform';
 import type { Operator } from './conditionNumber';
+import { symmetricCirculant } from './symmetricCirculant';
 
 /**
  * The inverse of T. Chan's circulant preconditioner of a symmetric positive definite Toeplitz matrix (*SIAM J. Sci.
@@ -10,28 +10,18 @@ import type { Operator } from './conditionNumber';
  * @param column first column of T
  */
 export function circulantInverse(column: Float64Array): Operator {
+  return symmetricCirculant(nearestCirculant(column), column.length, (eigenvalue) => 1 / eigenvalue);
+}
+
+/** First column of that circulant matrix itself. */
+export function nearestCirculant(column: Float64Array): Float64Array {
   const n = column.length;
-  const size = sizeFor(n);
-  const transform = transformOf(size);
-  const { re: eigenvalues, im } = newSpectrum(size);
+  const circle = new Float64Array(sizeFor(n, 8));
   for (let k = 0; k < n; k++) {
     const value = (1 - k / n) * column[k];
-    eigenvalues[k] += value;
+    circle[k] += value;
     // Lag -k; what lies further apart than the circle is long meets what has come round.
-    if (k > 0) eigenvalues[size - k] += value;
+    if (k > 0) circle[circle.length - k] += value;
   }
-  transform.forward(eigenvalues, im);
-  const buffer = newSpectrum(size);
-  return (v) => {
-    buffer.re.fill(0, n);
-    buffer.im.fill(0);
-    buffer.re.set(v);
-    transform.forward(buffer.re, buffer.im);
-    for (let p = 0; p < size; p++) {
-      buffer.re[p] /= eigenvalues[p];
-      buffer.im[p] /= eigenvalues[p];
-    }
-    transform.inverse(buffer.re, buffer.im);
-    return buffer.re.slice(0, n);
-  };
+  return circle;
 }

@@ -1,7 +1,11 @@
 import { addMultiple, inner, norm } from './vectors';
 
-/** A linear map on vectors of one size. */
-export type Operator = (vector: Float64Array) => Float64Array;
+/**
+ * A linear map on vectors of one size.
+ * @param into where the result may be written, other than the vector; a new array where it is not given
+ * @returns the result, in `into` or in an array that the operator makes or gives away
+ */
+export type Operator = (vector: Float64Array, into?: Float64Array) => Float64Array;
 
 const steps = 48;
 
@@ -70,7 +74,7 @@ function allBelow(diagonal: readonly number[], beside: readonly number[], bound:
 }
 
 /** A vector with a share of every direction, the same on every machine: a linear congruential sequence. */
-function startVector(size: number): Float64Array {
+export function startVector(size: number): Float64Array {
   const vector = new Float64Array(size);
   let state = 12345;
   for (let k = 0; k < size; k++) {

@@ -1,4 +1,5 @@
 import type { Generators } from './displacement';
+import { eliminateByTwo } from './doubleSteps';
 import { rotate, rotateFour, rotateHyperbolically } from './rotations';
 
 /** Where |reflection| reaches 1 to working accuracy: the matrix is not positive definite. */
@@ -32,7 +33,10 @@ export type Emit = (i: number, column: Float64Array, offset: number) => void;
  */
 export function invertBySchur(generators: Generators): InverseGenerators | SchurBreakdown {
   const { size, inputs, plus, minus } = generators;
-  const shifts = eliminate(generators, size + inputs, () => {});
+  const shifts =
+    inputs === 1 && plus.length === 2
+      ? eliminateByTwo(generators, toleranceOf(size))
+      : eliminate(generators, size + inputs, () => {});
   if (typeof shifts === 'number') return { order: shifts };
   // The Schur complement is -R⁻¹: the signs change places.
   return {
@@ -51,13 +55,18 @@ export function factorBySchur(generators: Generators, emit: Emit): SchurBreakdow
   return typeof shifts === 'number' ? { order: shifts } : null;
 }
 
+/** A pivot at or below this share of its diagonal element counts as zero. */
+function toleranceOf(size: number): number {
+  return size * 2.220446049250313e-16;
+}
+
 /**
  * @param below rows that are not zero below row n - 1 at the start, plus K for each block of rows; 0 leaves them out
  * @returns how far each plus column has moved down, or the order at which it broke down
  */
 function eliminate(generators: Generators, below: number, emit: Emit): Int32Array | number {
   const { inputs, size, plus, minus, diagonal } = generators;
-  const tolerance = size * 2.220446049250313e-16;
+  const tolerance = toleranceOf(size);
   const shifts = new Int32Array(plus.length);
   // Moving a column down by F moves no values: row t stands at t - shift. What leaves R at its end is lost.
   const finish = (i: number, j: number) => {

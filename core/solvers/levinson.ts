@@ -1,7 +1,6 @@
-import type { Operator } from './conditionNumber';
 import { gohbergSemencul } from './gohbergSemencul';
 import { refine } from './refine';
-import { shiftSumOperator } from './shiftSum';
+import { toeplitzOperator } from './toeplitz';
 
 /** The prediction-error filters that the recursion passes on its way. */
 export interface PredictionErrors {
@@ -35,11 +34,6 @@ export function solveLevinson(column: Float64Array, b: Float64Array): LevinsonRe
   if (errors.order < column.length) return { ...errors, solution: new Float64Array(column.length) };
   const { solution } = refine(toeplitzOperator(column), gohbergSemencul(errors), b, refinements);
   return { ...errors, solution };
-}
-
-/** `T v` for a symmetric Toeplitz matrix, by transforms. */
-export function toeplitzOperator(column: Float64Array): Operator {
-  return shiftSumOperator({ inputs: 1, length: column.length, toeplitz: [[column]], plus: [], minus: [] });
 }
 
 /**
@@ -100,22 +94,35 @@ function advance(
   let old = before[0];
   let left = now[0];
   before[0] = left;
-  let even = 0;
-  let odd = (row[0] + row[top]) * left;
-  // Two at a time, each into a sum of its own: a sum waits for the one before.
-  const last = (top - 1) >> 1;
+  let a = (row[0] + row[top]) * left;
+  let b = 0;
+  let c = 0;
+  let d = 0;
+  // Four at a time, each into a sum of its own: a sum waits for the one before.
+  const last = ((top - 1) >> 1) - 2;
   let i = 1;
-  for (; i < last; i += 2) {
-    const own = now[i];
-    const next = now[i + 1];
-    const first = own + left - alpha * old;
-    const second = next + own - alpha * before[i];
-    old = before[i + 1];
-    left = next;
-    before[i] = first;
-    before[i + 1] = second;
-    even += (row[i] + row[top - i]) * first;
-    odd += (row[i + 1] + row[top - i - 1]) * second;
+  for (let m = top - 1; i < last; i += 4, m -= 4) {
+    const now0 = now[i];
+    const now1 = now[i + 1];
+    const now2 = now[i + 2];
+    const now3 = now[i + 3];
+    const before0 = before[i];
+    const before1 = before[i + 1];
+    const before2 = before[i + 2];
+    const next0 = now0 + left - alpha * old;
+    const next1 = now1 + now0 - alpha * before0;
+    const next2 = now2 + now1 - alpha * before1;
+    const next3 = now3 + now2 - alpha * before2;
+    old = before[i + 3];
+    left = now3;
+    before[i] = next0;
+    before[i + 1] = next1;
+    before[i + 2] = next2;
+    before[i + 3] = next3;
+    a += (row[i] + row[m]) * next0;
+    b += (row[i + 1] + row[m - 1]) * next1;
+    c += (row[i + 2] + row[m - 2]) * next2;
+    d += (row[i + 3] + row[m - 3]) * next3;
   }
   for (; i <= half; i++) {
     const value = now[i] + left - alpha * old;
@@ -123,9 +130,9 @@ function advance(
     old = before[i];
     before[i] = value;
     // The middle of an even order stands for itself.
-    even += (2 * i === top ? row[i] : row[i] + row[top - i]) * value;
+    a += (2 * i === top ? row[i] : row[i] + row[top - i]) * value;
   }
-  return even + odd;
+  return a + b + (c + d);
 }
 
 /** `a_(n-1)` by `(1 - z) a_(n-1) = p_n - (1 + k_(n-1)) z p_(n-1)`. */

@@ -1,15 +1,15 @@
 import { type CholeskyFactor, factorCholesky, solveCholesky } from './cholesky';
-import { circulantInverse } from './circulant';
-import type { Operator } from './conditionNumber';
-import { conjugateGradients } from './conjugateGradients';
+import { largestEigenvalue, type Operator } from './conditionNumber';
 import { generatorsOf, type ShiftStructure } from './displacement';
 import { factorOnDemand } from './factorOnDemand';
 import { invertBySchur } from './generalisedSchur';
 import { gohbergSemencul } from './gohbergSemencul';
-import { predictionErrors, toeplitzOperator } from './levinson';
+import { predictionErrors } from './levinson';
 import { normalOperator } from './normalMultiply';
 import { elementsOf, multiply, type NormalSystem } from './normalSystem';
+import { prepareGradients, prepareToeplitzGradients } from './prepareGradients';
 import { shiftSumOperator } from './shiftSum';
+import { toeplitzOperator } from './toeplitz';
 
 export type Method = 'levinson' | 'gradients' | 'schur' | 'cholesky';
 
@@ -19,8 +19,11 @@ export interface Prepared {
   multiply: Operator;
   /** Close to v ↦ (A + ρ I)⁻¹ v */
   inverse: Operator;
-  /** The same to three digits or more, which is enough for the condition number. */
-  roughInverse: Operator;
+  /**
+   * The smallest eigenvalue of A + ρ I, from above.
+   * @param settled change of four steps at which it is known well enough, as a share of it
+   */
+  smallestEigenvalue(settled: number): number;
   /** Steps of refinement that it takes at most. */
   refinements: number;
   /** Where the method has one. */
@@ -30,23 +33,38 @@ export interface Prepared {
 /** One or two steps are enough, four up to condition numbers that are refused; it ends where it gains nothing. */
 const mostRefinements = 4;
 
-/** Narrow-band inputs take more; Levinson's recursion is faster for them. */
-const mostGradientSteps = 60;
-
 /** Below this Cholesky's method is as fast. */
 const fewestForSchur = 256;
 
-/** Above this conjugate gradients are faster than Levinson's recursion, whose time grows as the square. */
-const mostForLevinson = 8192;
+/** Where conjugate gradients take over from recursions, whose time grows as the square. */
+export interface Limits {
+  /** Unknowns above which they are tried first. */
+  unknowns: number;
+  /** Pairs of generators times unknowns², some 2 ns each, up to which the Schur algorithm stands in for them. */
+  schur: number;
+}
+
+export const usualLimits: Limits = { unknowns: 8192, schur: 1e9 };
 
 /** The method that suits the structure and the size of the matrix. */
-export function methodFor({ matrix, size }: NormalSystem): Method {
-  if ('toeplitz' in matrix) return size <= mostForLevinson ? 'levinson' : 'gradients';
+export function methodFor({ matrix, size }: NormalSystem, limits = usualLimits): Method {
+  if ('toeplitz' in matrix) return size <= limits.unknowns ? 'levinson' : 'gradients';
   const { structure } = matrix;
   if (structure === undefined || size < fewestForSchur) return 'cholesky';
+  if (size > limits.unknowns) return 'gradients';
   // Its time grows as pairs · size², Cholesky's as size³.
-  const pairs = structure.inputs + structure.edges.length;
-  return pairs <= 8 + size / 16 ? 'schur' : 'cholesky';
+  return pairsOf(structure) <= 8 + size / 16 ? 'schur' : 'cholesky';
+}
+
+/** Whether the generalised Schur algorithm ends within a second or two. */
+export function schurIsShort({ matrix, size }: NormalSystem, limits: Limits): boolean {
+  if ('toeplitz' in matrix || matrix.structure === undefined) return false;
+  return pairsOf(matrix.structure) * size * size <= limits.schur;
+}
+
+/** Pairs of columns that its generators have. */
+function pairsOf({ inputs, edges }: ShiftStructure): number {
+  return inputs + edges.length;
 }
 
 /**
@@ -62,10 +80,11 @@ export function prepare(
   if ('toeplitz' in matrix && method !== 'cholesky') {
     const column = matrix.toeplitz.slice();
     column[0] += regularisation;
-    return method === 'gradients' ? prepareGradients(column) : prepareLevinson(column);
+    return method === 'gradients' ? prepareToeplitzGradients(column) : prepareLevinson(column);
   }
-  if (method === 'schur' && 'structure' in matrix && matrix.structure !== undefined) {
-    return prepareSchur(matrix.structure, regularisation);
+  if ('structure' in matrix && matrix.structure !== undefined) {
+    if (method === 'schur') return prepareSchur(matrix.structure, regularisation);
+    if (method === 'gradients') return prepareGradients(matrix.structure, regularisation);
   }
   return prepareCholesky(system, regularisation);
 }
@@ -77,21 +96,10 @@ function prepareLevinson(column: Float64Array): Prepared | { order: number } {
   return {
     multiply: toeplitzOperator(column),
     inverse,
-    roughInverse: inverse,
+    smallestEigenvalue: byInverse(inverse, column.length),
     refinements: mostRefinements,
     factor: factorOnDemand({ inputs: 1, length: column.length, columns: [[column]], edges: [] }, 0),
   };
-}
-
-/** Its inverse gives NaN where the steps do not suffice. */
-function prepareGradients(column: Float64Array): Prepared {
-  const multiply = toeplitzOperator(column);
-  const precondition = circulantInverse(column);
-  const solveTo = (tolerance: number) => (b: Float64Array) => {
-    const { solution, reached } = conjugateGradients(multiply, precondition, b, tolerance, mostGradientSteps);
-    return reached ? solution : solution.fill(Number.NaN);
-  };
-  return { multiply, inverse: solveTo(1e-14), roughInverse: solveTo(1e-5), refinements: 0, factor: null };
 }
 
 function prepareSchur(structure: ShiftStructure, regularisation: number): Prepared | { order: number } {
@@ -109,7 +117,7 @@ function prepareSchur(structure: ShiftStructure, regularisation: number): Prepar
   return {
     multiply: normalOperator(structure, regularisation),
     inverse,
-    roughInverse: inverse,
+    smallestEigenvalue: byInverse(inverse, inputs * length),
     refinements: mostRefinements,
     factor: factorOnDemand(structure, regularisation),
   };
@@ -128,8 +136,12 @@ function prepareCholesky(system: NormalSystem, regularisation: number): Prepared
   return {
     multiply: (v) => multiply(system, regularisation, v),
     inverse,
-    roughInverse: inverse,
+    smallestEigenvalue: byInverse(inverse, size),
     refinements: 1,
     factor,
   };
+}
+
+function byInverse(inverse: Operator, size: number): (settled: number) => number {
+  return (settled) => 1 / largestEigenvalue(inverse, size, settled);
 }

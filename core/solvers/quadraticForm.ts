@@ -1,6 +1,6 @@
-import { toeplitzOperator } from './levinson';
 import { normalOperator } from './normalMultiply';
 import { multiply, type NormalSystem } from './normalSystem';
+import { toeplitzOperator } from './toeplitz';
 
 /**
  * `wᵀ (Φ/L) w`, the mean square of the output that the statistics tell, without forming the matrix where its structure

@@ -4,6 +4,9 @@ import { norm } from './vectors';
 /** A residual of this share of b or less is as small as rounding leaves it where the system is well conditioned. */
 const enough = 1e-15;
 
+/** The same where the step before should have left less than a thousandth of it: what is left is rounding. */
+const enoughRounding = 1e-14;
+
 /** A step that does not lower the residual to less than this share is the last: rounding is all that is left. */
 const worthwhile = 0.5;
 
@@ -24,13 +27,15 @@ export function refine(
   let solution = solve(b);
   let residual = difference(b, multiply(solution));
   let size = norm(residual);
-  const target = enough * norm(b);
-  for (let step = 0; step < most && size > target; step++) {
+  const whole = norm(b);
+  for (let step = 0; step < most && size > enough * whole; step++) {
     const better = sum(solution, solve(residual));
     const left = difference(b, multiply(better));
     const leftSize = norm(left);
     if (!(leftSize < size)) break;
-    const last = leftSize > worthwhile * size;
+    // Each step leaves about the share that the approximate inverse left of b.
+    const rounding = leftSize <= enoughRounding * whole && leftSize > 1000 * (size / whole) * size;
+    const last = rounding || leftSize > worthwhile * size;
     solution = better;
     residual = left;
     size = leftSize;

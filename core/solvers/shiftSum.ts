@@ -37,7 +37,7 @@ export function shiftSumOperator({ inputs, length, toeplitz, plus, minus }: Shif
   const product = Array.from({ length: inputs }, () => newSpectrum(size));
   const between = newSpectrum(size);
 
-  return (v) => {
+  return (v, into = new Float64Array(inputs * length)) => {
     for (let r = 0; r < inputs; r++) {
       clear(product[r]);
       clear(given[r]);
@@ -60,12 +60,11 @@ export function shiftSumOperator({ inputs, length, toeplitz, plus, minus }: Shif
       // The real part of the product with plus + i minus is what the pair adds; the imaginary part is left unused.
       for (let r = 0; r < inputs; r++) addProduct(product[r], forth[r], between);
     }
-    const result = new Float64Array(inputs * length);
     for (let r = 0; r < inputs; r++) {
       transform.inverse(product[r].re, product[r].im);
-      result.set(product[r].re.subarray(0, length), r * length);
+      into.set(product[r].re.subarray(0, length), r * length);
     }
-    return result;
+    return into;
   };
 }
 

@@ -45,3 +45,16 @@ export function structuredDiagonal(
   }
   return diagonal;
 }
+
+/**
+ * Elements near to those of A off the diagonal, each looked up in a step: as if every row were the first one moved on.
+ * Their error is about the filter's length over the samples of the fit.
+ */
+export function nearElements({ length, columns }: ShiftStructure): (i: number, j: number) => number {
+  return (i, j) => {
+    const r = Math.floor(i / length);
+    const s = Math.floor(j / length);
+    const lag = i - r * length - (j - s * length);
+    return lag >= 0 ? columns[r][s][lag] : columns[s][r][-lag];
+  };
+}

@@ -1,9 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { circulantInverse } from '../../../core/solvers/circulant';
 import { conjugateGradients } from '../../../core/solvers/conjugateGradients';
-import { solveLevinson, toeplitzOperator } from '../../../core/solvers/levinson';
+import { solveLevinson } from '../../../core/solvers/levinson';
 import type { NormalSystem } from '../../../core/solvers/normalSystem';
 import { solve } from '../../../core/solvers/solve';
+import { toeplitzOperator } from '../../../core/solvers/toeplitz';
 import { relativeGap } from '../../support/leastSquaresCases';
 import { normals } from '../../support/random';
 

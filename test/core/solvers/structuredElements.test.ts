@@ -3,7 +3,11 @@ import { roundErrorAware, roundingCost } from '../../../core/numbers/errorAwareR
 import { wordRange } from '../../../core/numbers/words';
 import { normalOperator } from '../../../core/solvers/normalMultiply';
 import { elementsOf } from '../../../core/solvers/normalSystem';
-import { structuredDiagonal, structuredElements } from '../../../core/solvers/structuredElements';
+import {
+  nearElements,
+  structuredDiagonal,
+  structuredElements,
+} from '../../../core/solvers/structuredElements';
 import { normals } from '../../support/random';
 import { solveTakes, takeOf } from '../../support/takes';
 
@@ -41,6 +45,7 @@ describe('elements of a matrix that is not formed', () => {
     const products = {
       diagonal: structuredDiagonal(structure, 0.001),
       multiply: normalOperator(structure, 0.001),
+      near: element,
     };
     const targets = normals(5, system.size).map((value) => 30 * value);
     const cost = { size: system.size, element, factor: null };
@@ -49,5 +54,27 @@ describe('elements of a matrix that is not formed', () => {
     expect(byProducts).toEqual(byElements);
     const plain = targets.map((value) => Math.floor(value + 0.5));
     expect(roundingCost(byProducts, targets, cost)).toBeLessThan(roundingCost(plain, targets, cost));
+  });
+
+  it('round nearly as well by near elements, and never worse than plain', async () => {
+    const { system, structure } = await structured(60);
+    const element = elementsOf(system, 0.001);
+    const products = {
+      diagonal: structuredDiagonal(structure, 0.001),
+      multiply: normalOperator(structure, 0.001),
+      near: nearElements(structure),
+    };
+    const targets = normals(6, system.size).map((value) => 30 * value);
+    const cost = { size: system.size, element, factor: null };
+    const costOf = (values: Float64Array) => roundingCost(values, targets, cost);
+    const plain = costOf(targets.map((value) => Math.floor(value + 0.5)));
+    const best = costOf(roundErrorAware(targets, cost, wordRange(8)));
+    const near = costOf(roundErrorAware(targets, { ...cost, products }, wordRange(8)));
+    expect(near - best).toBeLessThan(0.2 * (plain - best));
+    // Elements that mislead lead to no step.
+    const misled = { ...products, near: (i: number, j: number) => -1000 * element(i, j) };
+    expect(costOf(roundErrorAware(targets, { ...cost, products: misled }, wordRange(8)))).toBeLessThanOrEqual(
+      plain,
+    );
   });
 });
