@@ -17,7 +17,11 @@ export interface LinearScale {
  * @param range places of its ends
  * @param roundTo where given, the domain is widened to values as round as about so many ticks
  */
-export function linearScale(domain: [number, number], range: [number, number], roundTo?: number): LinearScale {
+export function linearScale(
+  domain: [number, number],
+  range: [number, number],
+  roundTo?: number,
+): LinearScale {
   const [from, to] = roundTo === undefined ? domain : nice(...domain, roundTo);
   const place = (value: number) => range[0] + ((value - from) / (to - from)) * (range[1] - range[0]);
   return Object.assign(place, {
