@@ -1,10 +1,12 @@
-import { closeSync, openSync, readSync } from 'node:fs';
+import { closeSync, fstatSync, openSync, readSync } from 'node:fs';
 import { stat } from 'node:fs/promises';
 import type { ByteSource } from '../../core/bytes/byteSource';
 import type { OpenFailure } from '../../core/pipeline/host';
 
 /** Ranges of a local file. The handle stays open until {@link OpenFile.close}. */
 export interface OpenFile extends ByteSource {
+  /** Whether the file that is open has been written to since; one that was put in its place is another. */
+  hasChanged(): boolean;
   close(): Promise<void>;
 }
 
@@ -14,15 +16,16 @@ export async function openFile(path: string): Promise<OpenFile | OpenFailure> {
     // Looked at before it is opened: opening a pipe that nobody writes to would wait for ever.
     const about = await stat(path);
     if (!about.isFile()) return 'not-a-file';
-    return fileSource(openSync(path, 'r'), about.size);
+    return fileSource(openSync(path, 'r'));
   } catch (error) {
     return (error as NodeJS.ErrnoException).code === 'ENOENT' ? 'missing' : 'unreadable';
   }
 }
 
 /** Reads at once, without a thread of the pool between: recordings are read in thousands of small ranges. */
-function fileSource(descriptor: number, size: number): OpenFile {
+function fileSource(descriptor: number): OpenFile {
   let buffer = new Uint8Array(0);
+  const { size, mtimeMs } = fstatSync(descriptor);
   return {
     size,
     async read(offset, length) {
@@ -34,6 +37,10 @@ function fileSource(descriptor: number, size: number): OpenFile {
         filled += count;
       }
       return buffer.subarray(0, filled);
+    },
+    hasChanged() {
+      const now = fstatSync(descriptor);
+      return now.size !== size || now.mtimeMs !== mtimeMs;
     },
     close: async () => closeSync(descriptor),
   };

@@ -1,7 +1,9 @@
-import { mkdir, open, readFile, rename, rm, stat } from 'node:fs/promises';
-import { join, relative, sep } from 'node:path';
+import { mkdir, open, readdir, readFile, rename, rm, stat } from 'node:fs/promises';
+import { basename, dirname, join, relative, sep } from 'node:path';
 import { type Disk, DiskError } from '../files/disk';
 import { staysInside } from './nodeHost';
+
+let lastTemporary = 0;
 
 /**
  * The local disk.
@@ -34,15 +36,38 @@ export function nodeDisk(root: string, folder: string): Disk {
     async makeFolder(path) {
       await told(mkdir(whole(path), { recursive: true }));
     },
-    beside: (path) => `${path}.${process.pid}.tmp`,
+    beside: (path) => `${path}.${process.pid}.${++lastTemporary}.tmp`,
+    tidy: (path) => told(tidy(whole(path))),
     write: (path, bytes) => told(writeWhole(whole(path), bytes)),
     rename: (from, to) => told(rename(whole(from), whole(to))),
-    remove: (path) => rm(whole(path), { force: true }),
+    remove: (path) => told(rm(whole(path), { force: true })),
   };
 }
 
+/** Removes what processes that are gone left in the middle of writing a file. */
+async function tidy(path: string): Promise<void> {
+  const folder = dirname(path);
+  for (const name of await readdir(folder)) {
+    if (!name.startsWith(`${basename(path)}.`)) continue;
+    const [, pid] = /^\.(\d+)\.\d+\.tmp$/.exec(name.slice(basename(path).length)) ?? [];
+    if (pid !== undefined && isGone(Number(pid))) await rm(join(folder, name), { force: true });
+  }
+}
+
+function isGone(pid: number): boolean {
+  try {
+    process.kill(pid, 0);
+    return false;
+  } catch (error) {
+    // Another user's process may not be asked, but is there.
+    return (error as NodeJS.ErrnoException).code === 'ESRCH';
+  }
+}
+
 async function writeWhole(path: string, bytes: Uint8Array): Promise<void> {
-  const handle = await open(path, 'w');
+  // Whatever has the name is in nobody's use. A link is removed, not followed.
+  await rm(path, { force: true });
+  const handle = await open(path, 'wx');
   try {
     await handle.writeFile(bytes);
     await handle.sync();

@@ -9,6 +9,8 @@ import { type OpenFile, openFile } from './fileSource';
 
 /** A host over a folder of the local disk. */
 export interface NodeHost extends Host {
+  /** Paths from the root of the open files that were written to since they were opened. */
+  changed(): string[];
   /** Closes every file that was opened. */
   close(): Promise<void>;
 }
@@ -24,7 +26,7 @@ export function newSha256(): Sha256 {
  * @param keep kept stages, for hosts that do the same work again and again
  */
 export function newNodeHost(root: string, pace: Pace, keep: Keep = keepNothing): NodeHost {
-  const files: OpenFile[] = [];
+  const files: { path: string; file: OpenFile }[] = [];
   return {
     newSha256,
     pace,
@@ -33,11 +35,12 @@ export function newNodeHost(root: string, pace: Pace, keep: Keep = keepNothing):
       const whole = join(root, path);
       if (!(await staysInside(root, whole))) return 'outside';
       const file = await openFile(whole);
-      if (typeof file !== 'string') files.push(file);
+      if (typeof file !== 'string') files.push({ path, file });
       return file;
     },
+    changed: () => files.flatMap(({ path, file }) => (file.hasChanged() ? [path] : [])),
     async close() {
-      await Promise.all(files.splice(0).map((file) => file.close()));
+      await Promise.all(files.splice(0).map(({ file }) => file.close()));
     },
   };
 }

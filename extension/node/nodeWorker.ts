@@ -1,10 +1,13 @@
-import { Worker } from 'node:worker_threads';
+import { type ResourceLimits, Worker } from 'node:worker_threads';
 import type { Frame } from '../../core/protocol/rpc';
 import type { WorkerPort } from '../platform';
 
-/** Starts the bundled worker in a thread of its own. */
-export function nodeWorker(script: string): WorkerPort {
-  const worker = new Worker(script, { name: 'tapwright' });
+/**
+ * Starts the bundled worker in a thread of its own.
+ * @param resourceLimits of its memory, in MiB; where it needs more it dies alone. Without them those of the process
+ */
+export function nodeWorker(script: string, resourceLimits: ResourceLimits = {}): WorkerPort {
+  const worker = new Worker(script, { name: 'tapwright', resourceLimits });
   let asked = false;
   return {
     post: (message, transfer) => worker.postMessage(message, transfer ?? []),

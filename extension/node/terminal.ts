@@ -1,6 +1,7 @@
 import { writeSync } from 'node:fs';
 import { visible } from '../../core/figures/visible';
 import { newPace, type Pace } from '../../core/pace';
+import { exit } from './commandLine';
 
 /** Where a command speaks: results on standard output, everything else on standard error. */
 export interface Terminal {
@@ -19,7 +20,9 @@ function write(stream: 1 | 2, text: string): void {
     } catch (error) {
       const { code } = error as NodeJS.ErrnoException;
       if (code === 'EPIPE') process.exit(0);
-      if (code !== 'EAGAIN') throw error;
+      if (code === 'EAGAIN') continue;
+      if (stream === 1) write(2, `tapwright: standard output could not be written (${code})\n`);
+      process.exit(exit.badInput);
     }
   }
 }

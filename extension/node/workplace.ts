@@ -1,5 +1,5 @@
 import { open, readFile, stat } from 'node:fs/promises';
-import { basename, dirname, relative, resolve, sep } from 'node:path';
+import { basename, dirname, join, relative, resolve, sep } from 'node:path';
 import { largestDocument } from '../../core/document/parseJson';
 import { type Finding, finding } from '../../core/findings/finding';
 import type { DocumentPlace } from '../../core/pipeline/pairing';
@@ -46,6 +46,11 @@ export async function openWorkplace(
     place: { file: basename(path), folder: relative(root, folder).split(sep).join('/') },
     text,
   };
+}
+
+/** A path from the root as one from the document's folder. */
+export function fromFolder({ root, folder }: Workplace, path: string): string {
+  return relative(folder, join(root, path)).split(sep).join('/');
 }
 
 /** Recordings are named where documents are expected now and then; JSON has neither of their first bytes nor a NUL. */

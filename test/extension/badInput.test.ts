@@ -1,4 +1,4 @@
-import { chmodSync, mkdirSync, symlinkSync, writeFileSync } from 'node:fs';
+import { mkdirSync, symlinkSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { emptyFolder, snapshot, tapwright } from '../support/cli';
@@ -191,10 +191,28 @@ describe('tapwright design', () => {
     )?.[1];
     expect(designs(filter({ length: 16, regularisation: Number(smallest) })).status).toBe(0);
   });
+});
 
-  it.skipIf(process.getuid?.() === 0)('says so where the folder cannot be written', () => {
-    chmodSync(folder, 0o555);
-    expectRefused(good, 'not-writable');
+describe('a name of the document', () => {
+  it.each([
+    ['\u202eca\nse.pairing.json', 'control-character'],
+    ['ca\\se.pairing.json', 'path-backslash'],
+  ])('that written files cannot have is refused before anything is written: %j', (name, code) => {
+    writeFileSync(join(folder, name), JSON.stringify(good));
+    const before = snapshot(folder);
+    for (const command of ['design', 'check']) {
+      const { status, out, err } = tapwright(folder, command, name);
+      expect(out + err).toMatch(
+        new RegExp(`^[^\\n]+: error: NAME\\.pairing\\.json: got .*\\[${code}\\]$`, 'm'),
+      );
+      expect([status, snapshot(folder)]).toEqual([2, before]);
+    }
+  });
+
+  it.each(['c:ase.pairing.json', '#$(cäse) 1.pairing.json'])('that is only unusual is taken: %j', (name) => {
+    writeFileSync(join(folder, name), JSON.stringify(good));
+    expect(tapwright(folder, 'design', name).status).toBe(0);
+    expect(tapwright(folder, 'check', name)).toMatchObject({ status: 0, err: '' });
   });
 });
 

@@ -116,10 +116,13 @@ async function writeWav(application: Application, output: string, source: string
     throw new UsageError('got the recording itself as -o when expected another file');
   const temporary = `${output}.${process.pid}.tmp`;
   try {
-    const handle = await open(temporary, 'w');
+    await rm(temporary, { force: true });
+    const handle = await open(temporary, 'wx');
     try {
-      await handle.write(floatWavHeader(application.sampleRate, 1, application.samples));
-      await application.run(async (samples) => void (await handle.write(floatWavSamples([samples]))));
+      // Each goes on where the last ended, and writes all or throws.
+      await handle.writeFile(floatWavHeader(application.sampleRate, 1, application.samples));
+      await application.run((samples) => handle.writeFile(floatWavSamples([samples])));
+      await handle.sync();
     } finally {
       await handle.close();
     }

@@ -2,7 +2,7 @@ import { visible } from '../../../core/figures/visible';
 import { changeJson } from '../../../core/files/changeJson';
 import { designFiles } from '../../../core/files/designFiles';
 import { findingJson, resultJson } from '../../../core/files/tapsJson';
-import { blocked, type Finding } from '../../../core/findings/finding';
+import { blocked, type Finding, finding } from '../../../core/findings/finding';
 import { problemLine } from '../../../core/findings/problemLine';
 import { changeAgainst } from '../../../core/pipeline/changeAgainst';
 import { design as runDesign } from '../../../core/pipeline/design';
@@ -10,7 +10,7 @@ import { type Arguments, type Command, exit, rootOption } from '../commandLine';
 import { newNodeHost } from '../nodeHost';
 import { changeSummary, designSummary } from '../summary';
 import { newTerminal, type Terminal } from '../terminal';
-import { openWorkplace } from '../workplace';
+import { fromFolder, openWorkplace } from '../workplace';
 import { writeFiles } from '../writeFiles';
 
 export const design: Command = {
@@ -44,6 +44,11 @@ async function designOne(document: string, given: Arguments, terminal: Terminal)
   try {
     const { result, findings } = await runDesign(host, text, place);
     if (result === null) return report(terminal, given, document, text, findings);
+    // Figures of one part of what a recording was and another of what it is are worth nothing.
+    const changed = host
+      .changed()
+      .map((path) => finding('file-changed', {}, { file: fromFolder(workplace, path) }));
+    if (changed.length > 0) return report(terminal, given, document, text, changed);
     const files = designFiles(result, host.newSha256);
     // The taps file comes last; it is compared before it is overwritten.
     const change = await changeAgainst(host, place.folder, files[files.length - 1].path, result);

@@ -1,4 +1,4 @@
-import { writeFile } from 'node:fs/promises';
+import { open, rm } from 'node:fs/promises';
 import { basename, dirname, extname, relative, resolve, sep } from 'node:path';
 import { type Job, jobs } from '../../../core/document/pairingDocument';
 import { visible } from '../../../core/figures/visible';
@@ -137,10 +137,20 @@ function numberGiven(given: Arguments, name: string, expected: string): number |
 
 /** Fails where the file is there already, also if it appeared a moment ago. */
 async function writeNew(path: string, text: string, shown: string): Promise<void> {
+  let made = false;
   try {
-    await writeFile(path, text, { flag: 'wx' });
+    const handle = await open(path, 'wx');
+    made = true;
+    try {
+      await handle.writeFile(text);
+      await handle.sync();
+    } finally {
+      await handle.close();
+    }
   } catch (error) {
     const { code } = error as NodeJS.ErrnoException;
+    // Half a document is none, and would be in the way of the next try.
+    if (made) await rm(path, { force: true });
     const found: Finding =
       code === 'EEXIST'
         ? finding('document-exists', {}, { file: shown })

@@ -1,6 +1,16 @@
-import { existsSync, mkdirSync, readdirSync, readFileSync, symlinkSync, writeFileSync } from 'node:fs';
+import {
+  existsSync,
+  lstatSync,
+  mkdirSync,
+  readdirSync,
+  readFileSync,
+  symlinkSync,
+  writeFileSync,
+} from 'node:fs';
 import { join } from 'node:path';
 import { beforeEach, describe, expect, it } from 'vitest';
+import { markLine } from '../../../core/files/generatedMark';
+import { writeFiles } from '../../../extension/node/writeFiles';
 import { emptyFolder, snapshot, tapwright } from '../../support/cli';
 import { normals } from '../../support/random';
 
@@ -88,6 +98,23 @@ describe('writing', () => {
     designs();
     expect(existsSync(join(other, 'none.h'))).toBe(false);
   });
+
+  it.each(['../../other/a.csv', '../a.csv', '../../other/none'])(
+    'does not follow a link to %s that lies where a file is written first',
+    async (target) => {
+      mkdirSync(join(root, 'generated'));
+      const path = 'generated/case_one_taps.h';
+      // The names of the next files of this process.
+      for (let n = 1; n <= 40; n++) symlinkSync(target, join(root, `${path}.${process.pid}.${n}.tmp`));
+      const mark = markLine({ document: 'case.pairing.json', digest: 'a'.repeat(64) }, 'c');
+      const { findings } = await writeFiles(root, root, [{ path, bytes: new TextEncoder().encode(mark) }]);
+      expect([findings, readFileSync(join(root, path), 'utf8')]).toEqual([[], mark]);
+      expect(lstatSync(join(root, path)).isFile()).toBe(true);
+      expect(readFileSync(join(root, 'a.csv'), 'utf8')).toBe(csv);
+      expect(Object.keys(snapshot(other))).toEqual(['a.csv']);
+      expect(readFileSync(join(other, 'a.csv'), 'utf8')).toBe(csv);
+    },
+  );
 
   it('follows a link that stays inside', () => {
     mkdirSync(join(root, 'firmware'));
