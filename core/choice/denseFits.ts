@@ -29,7 +29,7 @@ export function denseFitter(sums: JointSums, layout: Layout): NestedFitter {
       for (let j = 0; j <= i; j++) inverseTrace += row[j] * row[j];
       for (let d = 0; d < right.length; d++) addProjection(taps[d], row, right[d]);
       if (i + 1 === lengths[place] * inputs) {
-        yield { place, length: lengths[place], taps, inverseTrace };
+        yield { place, length: lengths[place], taps, walk: null, inverseTrace };
         place++;
       }
     }

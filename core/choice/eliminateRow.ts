@@ -1,96 +1,82 @@
-/** Columns of one sign. Row t of column j stands at `t - shifts[j]`. */
-export interface Columns {
-  rows: Float64Array[];
-  shifts: Int32Array;
+import type { Generators } from './generators';
+import { sweep } from './sweeps';
+import { sweepInverseTwice, sweepTwice } from './sweepTwice';
+import { findTurns, liftWeights } from './turns';
+
+/** The fit for one right-hand side, `w = Σ u uᵀ p` over the rows u of L⁻¹ so far. */
+export interface FirstFit {
+  p: Float64Array;
+  w: Float64Array;
+  /** Room for a row. */
+  row: Float64Array;
 }
 
-/** Columns of each sign that are turned in one pass; there must be at least as many. */
-export const fused = 4;
-
 /**
- * One step of the generalised Schur algorithm: turns the plus columns among themselves, the minus columns among
- * themselves (Householder's reflections) and then the pivot against the first minus column hyperbolically, in the mixed
- * form, so that in row `from` only the pivot is left. The error stays as small as with rotations (Chandrasekaran & Sayed,
- * *SIAM J. Matrix Anal. Appl.* 17, 1996, from memory). Five multiply-adds for each value of a column.
- * @param pivot plus columns before it are zero in this row; at least {@link fused} come from it on
- * @param to row from which on all columns are zero
- * @param least what the pivot's square must exceed
+ * One step of the generalised Schur algorithm: moves the pivot on and turns it against its partners, so that in row
+ * `step` only the pivot is left. What the shifts leave at the end of a part is lost. Nothing is to be done in the first K
+ * rows. What the pivot holds in the rows of I then is added to the fit.
+ * @param tolerance what the pivot's square must exceed, relative to the diagonal
  * @returns false where it does not: the matrix is not positive definite
  */
 export function eliminateRow(
-  plus: Columns,
-  minus: Columns,
-  pivot: number,
-  from: number,
-  to: number,
-  least: number,
+  generators: Generators,
+  step: number,
+  tolerance: number,
+  { p, w }: FirstFit,
 ): boolean {
-  gather(plus, pivot, from, to);
-  gather(minus, 0, from, to);
-  const [p0, p1, p2, p3] = plus.rows.slice(pivot);
-  const [h0, h1, h2, h3] = minus.rows;
-  const [d0, d1, d2, d3] = plus.shifts.subarray(pivot);
-  const u = reflection(p0[from - d0], p1[from - d1], p2[from - d2], p3[from - d3]);
-  const v = reflection(h0[from], h1[from], h2[from], h3[from]);
-  if (!((u.left - v.left) * (u.left + v.left) > least)) return false;
-  // Both reflections leave minus the sign of what stood there.
-  const ratio = (v.left / u.left) * u.sign * v.sign;
-  const cosine = Math.sqrt((1 - ratio) * (1 + ratio));
-  const secant = 1 / cosine;
-  const { a: u0, b: u1, c: u2, d: u3, scale: us } = u;
-  const { a: v0, b: v1, c: v2, d: v3, scale: vs } = v;
-  for (let t = from; t < to; t++) {
-    const x0 = p0[t - d0];
-    const x1 = p1[t - d1];
-    const x2 = p2[t - d2];
-    const x3 = p3[t - d3];
-    const y0 = h0[t];
-    const y1 = h1[t];
-    const y2 = h2[t];
-    const y3 = h3[t];
-    const s = us * (u0 * x0 + u1 * x1 + (u2 * x2 + u3 * x3));
-    const q = vs * (v0 * y0 + v1 * y1 + (v2 * y2 + v3 * y3));
-    const turned = y0 - v0 * q;
-    const kept = (x0 - u0 * s - ratio * turned) * secant;
-    p0[t - d0] = kept;
-    p1[t - d1] = x1 - u1 * s;
-    p2[t - d2] = x2 - u2 * s;
-    p3[t - d3] = x3 - u3 * s;
-    h0[t] = cosine * turned - ratio * kept;
-    h1[t] = y1 - v1 * q;
-    h2[t] = y2 - v2 * q;
-    h3[t] = y3 - v3 * q;
+  const { inputs, size, steps, width, values, weights, diagonal, turns } = generators;
+  const pivot = step % inputs;
+  const unit = size + steps;
+  // Rows of I from there on are zero in every column.
+  const count = step - pivot + inputs;
+  if (step >= inputs) {
+    liftWeights(generators);
+    const leading = values[(step - inputs) * width + pivot];
+    const row = step * width + inputs;
+    const turned = findTurns(generators, pivot, leading, row, tolerance * diagonal[pivot], turns[0]);
+    if (Number.isNaN(turned)) return false;
+    sweep(generators, pivot, turns[0], 0, step + 1, size, inputs);
+    values[step * width + pivot] = turned;
+    sweep(generators, pivot, turns[0], size, size, unit, 1);
+    sweep(generators, pivot, turns[0], unit, unit, unit + count, inputs);
   }
+  const first = unit * width + pivot;
+  let product = 0;
+  for (let k = 0, t = first; k < count; k++, t += width) product += values[t] * p[k];
+  product *= weights[pivot];
+  for (let k = 0, t = first; k < count; k++, t += width) w[k] += product * values[t];
   return true;
 }
 
-/** `I - scale · (a, b, c, d)ᵀ(a, b, c, d)`, which leaves `-sign · left` in the first place and nothing in the others. */
-function reflection(first: number, b: number, c: number, d: number) {
-  const left = Math.sqrt(first * first + b * b + (c * c + d * d));
-  const sign = first < 0 ? -1 : 1;
-  const a = first + sign * left;
-  const square = a * a + b * b + (c * c + d * d);
-  return { left, sign, a, b, c, d, scale: square > 0 ? 2 / square : 0 };
+/** Whether {@link eliminateTwoRows} does for these. */
+export function takesTwo({ inputs, raising }: Generators): boolean {
+  return inputs === 1 && raising === 1;
 }
 
-/** Turns every column beyond the fused ones into the first, one after the other. */
-function gather({ rows, shifts }: Columns, pivot: number, from: number, to: number): void {
-  const x = rows[pivot];
-  const dx = shifts[pivot];
-  for (let j = pivot + fused; j < rows.length; j++) {
-    const y = rows[j];
-    const dy = shifts[j];
-    const b = y[from - dy];
-    if (b === 0) continue;
-    const a = x[from - dx];
-    const length = Math.sqrt(a * a + b * b);
-    const c = a / length;
-    const s = b / length;
-    for (let t = from; t < to; t++) {
-      const left = x[t - dx];
-      const right = y[t - dy];
-      x[t - dx] = c * left + s * right;
-      y[t - dy] = c * right - s * left;
-    }
-  }
+/** The same for two steps from the second on in one pass over the rows, for one input and one edge. */
+export function eliminateTwoRows(
+  generators: Generators,
+  step: number,
+  tolerance: number,
+  { p, w, row: kept }: FirstFit,
+): boolean {
+  const { size, steps, width, values, weights, diagonal } = generators;
+  const [first, second] = generators.turns;
+  const least = tolerance * diagonal[0];
+  liftWeights(generators);
+  const row = step * width;
+  const between = findTurns(generators, 0, values[row - width], row + 1, least, first);
+  if (Number.isNaN(between)) return false;
+  const weight = weights[0];
+  // The partners in the next row after the first step, in the place of this row, which is of no more use.
+  const x = values[row];
+  values.copyWithin(row + 1, row + width + 1, row + 2 * width);
+  second.fill(0);
+  sweepTwice(values, first, second, step, step + 1, x, 0);
+  if (Number.isNaN(findTurns(generators, 0, between, row + 1, least, second))) return false;
+  const unit = size + steps;
+  sweepTwice(values, first, second, step + 1, size, x, between);
+  sweepTwice(values, first, second, size, unit, 0, 0);
+  sweepInverseTwice(values, first, second, unit, step + 2, weight, weights[0], p, w, kept);
+  return true;
 }

@@ -41,9 +41,8 @@ export function crossSums(sums: JointSums, { inputs, length, delays }: Layout): 
       for (const { before, after } of sums.edges) {
         const first = before[inputs][s];
         const last = after[inputs][s];
-        for (let k = 1; k < length; k++) {
-          row[k * inputs + r] += first * before[r][k - 1] - last * after[r][k - 1];
-        }
+        const [early, late] = [before[r], after[r]];
+        for (let k = 1; k < length; k++) row[k * inputs + r] += first * early[k - 1] - last * late[k - 1];
       }
     }
   }

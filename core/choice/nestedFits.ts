@@ -1,4 +1,5 @@
 import type { JointSums, Layout } from './blockSums';
+import type { DelayWalk } from './delayWalk';
 import { denseFitter } from './denseFits';
 import { structuredFitter } from './structuredFits';
 
@@ -9,6 +10,8 @@ export interface LengthFits {
   length: number;
   /** One row a delay, tap by tap (k·K + r); the first K·length values. Overwritten by the next length. */
   taps: readonly Float64Array[];
+  /** How they were found, where from those of the delay before; null otherwise. Overwritten likewise. */
+  walk: DelayWalk | null;
   /** Trace of the inverse of the regularised matrix. */
   inverseTrace: number;
 }

@@ -1,9 +1,10 @@
 import type { Pace } from '../pace';
 import type { JointSums, Layout, Statistics } from './blockSums';
+import { fitEnergies } from './fitEnergies';
 import type { Grid } from './grid';
 import { crossSums, desiredEnergies, inputSums } from './jointParts';
 import { type LengthFits, nestedFitter } from './nestedFits';
-import { type OutputEnergy, outputEnergy } from './outputEnergy';
+import { product } from './product';
 import { emptyResult, type SearchResult } from './searchResult';
 
 export interface SearchOptions {
@@ -32,7 +33,7 @@ export async function search(
     ...statistics.folds.map(({ training, blocks }) => newFold(training, blocks, layout)),
   ];
   const cross = crossSums(statistics.all, layout);
-  const floor = statistics.floor && outputEnergy(inputSums(statistics.floor, layout));
+  const floor = statistics.floor && fitEnergies(inputSums(statistics.floor, layout));
   result.fitDesired.set(desiredEnergies(statistics.all, layout));
   let block = 0;
   for (const { leftOut } of folds) {
@@ -67,7 +68,7 @@ function newFold(training: JointSums, blocks: readonly JointSums[], layout: Layo
     leftOut: blocks.map((sums) => ({
       energies: desiredEnergies(sums, layout),
       cross: crossSums(sums, layout),
-      outputs: outputEnergy(inputSums(sums, layout)),
+      outputsOf: fitEnergies(inputSums(sums, layout)),
     })),
   };
 }
@@ -76,12 +77,12 @@ function noteErrors(result: SearchResult, fold: Fold, from: number, rho: number,
   const { grid, blocks, inputs, errors } = result;
   const delays = grid.delays.length;
   const outputs = new Float64Array(delays);
-  fold.leftOut.forEach(({ energies, cross, outputs: energyOf }, b) => {
-    energyOf(fits.taps, fits.length, outputs);
+  fold.leftOut.forEach(({ energies, cross, outputsOf }, b) => {
+    outputsOf(fits, outputs);
     for (let d = 0; d < delays; d++) {
-      const product = inner(fits.taps[d], cross[d], fits.length * inputs);
+      const both = product(fits.taps[d], cross[d], fits.length * inputs);
       const place = (fits.place * delays + d) * grid.regularisations.length + rho;
-      errors[place * blocks + from + b] = Math.max(0, energies[d] - 2 * product + outputs[d]);
+      errors[place * blocks + from + b] = Math.max(0, energies[d] - 2 * both + outputs[d]);
     }
   });
 }
@@ -90,7 +91,7 @@ function noteErrors(result: SearchResult, fold: Fold, from: number, rho: number,
 function noteFit(
   result: SearchResult,
   cross: readonly Float64Array[],
-  floor: OutputEnergy | null,
+  floor: ReturnType<typeof fitEnergies> | null,
   rho: number,
   fits: LengthFits,
 ): void {
@@ -98,23 +99,12 @@ function noteFit(
   const regularisation = grid.regularisations[rho];
   const unknowns = fits.length * inputs;
   const floors = new Float64Array(grid.delays.length);
-  floor?.(fits.taps, fits.length, floors);
+  floor?.(fits, floors);
   for (let d = 0; d < grid.delays.length; d++) {
     const taps = fits.taps[d];
-    const penalty = samples * regularisation * inner(taps, taps, unknowns) + floors[d];
+    const penalty = samples * regularisation * product(taps, taps, unknowns) + floors[d];
     const place = (fits.place * grid.delays.length + d) * grid.regularisations.length + rho;
-    fit[place] = Math.max(0, fitDesired[d] - inner(taps, cross[d], unknowns) - penalty);
+    fit[place] = Math.max(0, fitDesired[d] - product(taps, cross[d], unknowns) - penalty);
   }
   freedom[fits.place * grid.regularisations.length + rho] = unknowns - regularisation * fits.inverseTrace;
-}
-
-function inner(a: Float64Array, b: Float64Array, count: number): number {
-  let even = 0;
-  let odd = 0;
-  const pairs = count - (count % 2);
-  for (let k = 0; k < pairs; k += 2) {
-    even += a[k] * b[k];
-    odd += a[k + 1] * b[k + 1];
-  }
-  return even + odd + (pairs < count ? a[pairs] * b[pairs] : 0);
 }
