@@ -15,17 +15,18 @@ export function denseFitter(sums: JointSums, layout: Layout): NestedFitter {
   const matrix = matrixByTaps(sums, layout);
   const right = crossSums(sums, layout).map((row) => row.map((value) => value / sums.count));
   return function* (regularisation, lengths) {
-    const factored = matrix.slice();
-    for (let i = 0; i < size; i++) factored[i * size + i] += regularisation;
-    const result = factorCholesky(factored, size);
-    const order = 'order' in result ? result.order : size;
-    const rows = new Float64Array(order * size);
+    const used = inputs * lengths[lengths.length - 1];
+    const factored = leadingPart(matrix, size, used);
+    for (let i = 0; i < used; i++) factored[i * used + i] += regularisation;
+    const result = factorCholesky(factored, used);
+    const order = 'order' in result ? result.order : used;
+    const rows = new Float64Array(order * used);
     const taps = right.map(() => new Float64Array(size));
     let inverseTrace = 0;
     let place = 0;
     for (let i = 0; i < order; i++) {
-      const row = rows.subarray(i * size, i * size + i + 1);
-      inverseRow(row, rows, factored, i, size);
+      const row = rows.subarray(i * used, i * used + i + 1);
+      inverseRow(row, rows, factored, i, used);
       for (let j = 0; j <= i; j++) inverseTrace += row[j] * row[j];
       for (let d = 0; d < right.length; d++) addProjection(taps[d], row, right[d]);
       if (i + 1 === lengths[place] * inputs) {
@@ -51,6 +52,13 @@ function matrixByTaps(sums: JointSums, layout: Layout): Float64Array {
     }
   }
   return matrix;
+}
+
+/** The first `used` rows and columns. */
+function leadingPart(matrix: Float64Array, size: number, used: number): Float64Array {
+  const part = new Float64Array(used * used);
+  for (let i = 0; i < used; i++) part.set(matrix.subarray(i * size, i * size + used), i * used);
+  return part;
 }
 
 /** Row i of L⁻¹: `(e_i - Σ_{j<i} L_ij v_j) / L_ii`. */

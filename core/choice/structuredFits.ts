@@ -28,7 +28,7 @@ export function structuredFitter(sums: JointSums, layout: Layout): NestedFitter 
     const fit = { p: entry, w: new Float64Array(size), row: new Float64Array(size) };
     const twice = takesTwo(generators);
     let place = 0;
-    for (let step = 0; step < size; ) {
+    for (let step = 0; place < lengths.length; ) {
       const two = twice && step > 0 && step + 2 <= lengths[place];
       const eliminate = two ? eliminateTwoRows : eliminateRow;
       if (!eliminate(generators, step, tolerance, fit)) return;
