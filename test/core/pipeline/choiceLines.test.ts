@@ -84,6 +84,8 @@ describe('choiceLines', () => {
   });
 
   it('say why there are none', async () => {
-    expect(await linesOf(documentOf(filter, 30))).toEqual({ withheld: expect.stringContaining('cross-validation') });
+    expect(await linesOf(documentOf(filter, 30))).toEqual({
+      withheld: expect.stringContaining('cross-validation'),
+    });
   });
 });
