@@ -1,3 +1,6 @@
+/** Node alone has it. */
+declare const setImmediate: ((callback: () => void) => unknown) | undefined;
+
 /**
  * Lets the event loop handle whatever waits, without the pause of a millisecond (four, once nested, in browsers) that a
  * timer takes at least.

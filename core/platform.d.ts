@@ -9,12 +9,7 @@ declare class TextEncoder {
   encode(input?: string): Uint8Array;
 }
 
-declare function setTimeout(callback: () => void, milliseconds?: number): unknown;
-
 declare const performance: { now(): number };
-
-/** Node alone has it. */
-declare const setImmediate: ((callback: () => void) => unknown) | undefined;
 
 declare class MessageChannel {
   readonly port1: { onmessage: (() => void) | null };
