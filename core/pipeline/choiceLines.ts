@@ -31,6 +31,9 @@ export interface WithheldLines {
 /** Unknowns from which the lines would take longer than the design. */
 const mostUnknowns = 1024;
 
+/** Every regularisation is a factorisation a block: above so many unknowns only the document's neighbours are tried. */
+const manyUnknowns = 256;
+
 /**
  * Cross-validates the three lines through the document's filter inside the fit intervals: free taps with covariance
  * windowing, as `choose` does. Held-out data is not touched.
@@ -48,8 +51,11 @@ export async function choiceLines(pairing: Pairing, work: Work): Promise<ChoiceL
     const statistics = await planned.statistics();
     const { pace } = work;
     const ownRho = { ...grid, regularisations: [filter.regularisation] };
-    const ownLength = { ...grid, lengths: [filter.length] };
-    const first = grid.regularisations.indexOf(filter.regularisation);
+    const place = grid.regularisations.indexOf(filter.regularisation);
+    const reach = unknowns > manyUnknowns ? 1 : grid.regularisations.length;
+    const regularisations = grid.regularisations.filter((_, i) => Math.abs(i - place) <= reach);
+    const ownLength = { ...grid, lengths: [filter.length], regularisations };
+    const first = regularisations.indexOf(filter.regularisation);
     const across = await search(statistics, layout, ownRho, { first: 0, pace });
     const along = await search(statistics, layout, ownLength, { first, pace });
     const own: Candidate = {
@@ -76,11 +82,11 @@ export async function choiceLines(pairing: Pairing, work: Work): Promise<ChoiceL
         ),
       },
       regularisation: {
-        values: grid.regularisations,
+        values: regularisations,
         own: first,
         ...errorCurve(
           along,
-          places(grid.regularisations, (regularisation) => ({ ...own, length: 0, regularisation })),
+          places(regularisations, (regularisation) => ({ ...own, length: 0, regularisation })),
         ),
       },
       validation: { by, blocks, gap, samples },
