@@ -47,6 +47,7 @@ const anchors: Record<string, string> = {
   'few-blocks': 'choice',
   'longest-is-best': 'choice',
   'delay-at-the-end': 'choice',
+  'choice-hidden': 'choice',
   'choice-of-free-taps': 'choice',
   'suggestion-unsolvable': 'choice',
 };

@@ -1,5 +1,7 @@
-import type { PairingDocument } from '../document/pairingDocument';
+import type { Job, PairingDocument } from '../document/pairingDocument';
 import { type Finding, finding } from '../findings/finding';
+import { intersect } from '../pair/intervals';
+import type { Take } from '../pair/take';
 import type { Grid } from './grid';
 import type { Suggestion } from './suggest';
 
@@ -22,6 +24,12 @@ export function edgeFindings(
     findings.push(finding('delay-at-the-end', { delay: chosen.delay, end }, { path: ['filter', 'delay'] }));
   }
   return findings;
+}
+
+/** Says so where the wanted signal of a canceller may be in what candidates are judged by. */
+export function wantedSignalFindings(job: Job, takes: readonly Take[]): Finding[] {
+  const bare = takes.some((take) => intersect(take.fit, take.disturbanceOnly).length > 0);
+  return job === 'cancel' && !bare ? [finding('choice-hidden', {}, { path: ['takes', 0] })] : [];
 }
 
 /** Says so where the document asks for something that the candidates leave out of account. */

@@ -60,6 +60,8 @@ export function testExtraLags(
     });
     const probability = energyTail(further.cross, covariance);
     const { gain, chance } = gains(further.products, further.cross, covariance);
+    // More than all cannot be taken: an input of next to nothing there, whose sums are rounding, tells nothing.
+    if (!(gain <= power)) return { input, side, lags: extraLags, probability: 1, share: 0 };
     // Chance goes by what would be left.
     const share = gain / power - (chance / power) * Math.max(0, 1 - gain / power);
     return { input, side, lags: extraLags, probability, share: Math.max(0, share) };

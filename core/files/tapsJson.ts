@@ -1,6 +1,7 @@
 import { roundedDecibels } from '../figures/decibels';
 import type { Finding } from '../findings/finding';
 import { say } from '../findings/say';
+import { comparableBands, comparableLimit } from '../pipeline/comparableLimit';
 import type { DesignResult, ErrorFigure, HeldOutFigures, TakeSummary } from '../pipeline/designResult';
 import { arithmeticJson } from './arithmeticJson';
 import { choiceLinesJson } from './choiceLinesJson';
@@ -56,7 +57,7 @@ export function resultJson(result: DesignResult): { [key: string]: Json } {
     means: { inputs: [...result.means.inputs], desired: result.means.desired },
     inputPowers: [...result.inputPowers],
     fit: figure(result.fit),
-    heldOut: result.heldOut && heldOut(result.heldOut, result.inspection),
+    heldOut: result.heldOut && heldOut(result.heldOut, result),
     method: result.method,
     conditionNumber: result.conditionNumber,
     confidence: confidenceJson(result),
@@ -90,18 +91,18 @@ function figure({ samples, mse, nmseDb }: ErrorFigure): { [key: string]: Json } 
   return { samples, mse, nmseDb: roundedDecibels(nmseDb) };
 }
 
-function heldOut(figures: HeldOutFigures, inspection: DesignResult['inspection']): Json {
-  const attainable = inspection?.attainable;
+function heldOut(figures: HeldOutFigures, result: DesignResult): Json {
+  const attainableBands = comparableBands(result);
   return {
     ...figure(figures),
     outsideBandDb: roundedDecibels(figures.outsideBandDb),
     disturbanceOnly: figures.disturbanceOnly,
-    attainableDb: roundedDecibels(attainable?.attainableDb),
+    attainableDb: roundedDecibels(comparableLimit(result)),
     bands: figures.bands.map(({ from, to, reductionDb }, b) => ({
       from,
       to,
       reductionDb: roundedDecibels(reductionDb),
-      attainableDb: roundedDecibels(attainable?.bandsDb[b]),
+      attainableDb: roundedDecibels(attainableBands[b]),
     })),
     takes: figures.takes.map((of) => ({
       name: of.name,

@@ -22,6 +22,10 @@ export const choiceSentences = table({
     severity: 'caution',
     says: 'the delay that is suggested, {delay}, is the {end} that was tried: a delay beyond it may be better still. Set "filter.delay" to {delay} and choose again.',
   },
+  'choice-hidden': {
+    severity: 'caution',
+    says: 'no fit interval is marked as disturbance only, so that the wanted signal, where it is in the fit, counts as error and makes differences between candidates look smaller than they are: the filter suggested may be too short. Mark a stretch of the fit without the wanted signal in "disturbanceOnly".',
+  },
   'choice-of-free-taps': {
     severity: 'note',
     says: 'cross-validation compares filters with free taps fitted with "covariance" windowing; the document asks for {asked}. The held-out figure of the suggestion is that of the filter as the document asks for it.',

@@ -4,7 +4,7 @@ import { table } from './sentence';
 export const timingSentences = table({
   lag: {
     severity: 'caution',
-    says: '{desired} comes {lag} samples {order} {input}, and {reach}.{start} A delay of {offer} takes the lag up and keeps {spare} taps before it.',
+    says: '{desired} comes {lag} samples {order} {input}, and {reach}.{start} A delay of {offer} takes the lag up and keeps {spare} of its taps before it.',
   },
   drift: {
     severity: 'caution',

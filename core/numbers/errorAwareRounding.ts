@@ -90,7 +90,11 @@ function nearestPlane(
   return values;
 }
 
-/** Rounds of steps by near elements, as long as they lower the true cost. */
+/**
+ * Rounds of steps by near elements, as long as they lower the true cost. By elements near enough a round takes a step for
+ * one unknown in twenty; where the fit has little more samples than unknowns, or an input hardly any power, they may
+ * promise gains without end.
+ */
 function improvedByRounds(
   plain: Float64Array,
   targets: Float64Array,
@@ -101,11 +105,14 @@ function improvedByRounds(
   let least = roundingCost(best, targets, cost);
   for (let round = 0; round < mostRounds; round++) {
     const next = best.slice();
-    if (improve(next, targets, cost, range) === 0) break;
+    const taken = improve(next, targets, cost, range, cost.size);
+    if (taken === 0) break;
     const reached = roundingCost(next, targets, cost);
     if (!(reached < least)) break;
     best = next;
     least = reached;
+    // Elements that never come to an end are not near enough to go by once more.
+    if (taken === cost.size) break;
   }
   return best;
 }
@@ -116,22 +123,23 @@ function improve(
   targets: Float64Array,
   cost: RoundingCost,
   { min, max }: WordRange,
+  most = 16 * cost.size,
 ): number {
   const { size } = cost;
   const gradient = gradientOf(values, targets, cost);
   const diagonal = diagonalOf(cost);
   // Every step lowers the cost, so that there is an end; the bound only keeps a poor start from taking long.
   let taken = 0;
-  for (; taken < 16 * size; taken++) {
+  for (; taken < most; taken++) {
     let best = -1;
-    let most = 0;
+    let largest = 0;
     for (let i = 0; i < size; i++) {
       const gain = 2 * Math.abs(gradient[i]) - diagonal[i];
-      if (gain <= most || gain <= 1e-12 * diagonal[i]) continue;
+      if (gain <= largest || gain <= 1e-12 * diagonal[i]) continue;
       const stepped = values[i] + (gradient[i] > 0 ? -1 : 1);
       if (stepped < min || stepped > max) continue;
       best = i;
-      most = gain;
+      largest = gain;
     }
     if (best < 0) break;
     const step = gradient[best] > 0 ? -1 : 1;

@@ -45,7 +45,7 @@ export async function choiceLines(pairing: Pairing, work: Work): Promise<ChoiceL
   const { filter } = pairing.document;
   const unknowns = layout.inputs * filter.length;
   if (unknowns > mostUnknowns) {
-    return { withheld: 'For so many coefficients it is left to `tapwright choose`.' };
+    return { withheld: 'for so many coefficients it is left to `tapwright choose`.' };
   }
   return work.keep('lines', [planned.key, filter], async () => {
     const statistics = await planned.statistics();

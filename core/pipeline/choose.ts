@@ -1,4 +1,4 @@
-import { edgeFindings, shapeFindings } from '../choice/choiceFindings';
+import { edgeFindings, shapeFindings, wantedSignalFindings } from '../choice/choiceFindings';
 import type { Folds } from '../choice/folds';
 import { type Opinion, secondOpinions } from '../choice/opinions';
 import { search } from '../choice/search';
@@ -90,6 +90,7 @@ async function chooseFor(
     ...planned.plan.findings,
     ...edgeFindings(grid, suggestion, kept !== null),
     ...shapeFindings(document.filter),
+    ...wantedSignalFindings(document.job, pairing.takes),
   );
   const macs = (length: number) => macsPerSample(layout.inputs, length, document.filter.symmetry);
   return {

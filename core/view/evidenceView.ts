@@ -2,6 +2,7 @@ import { residualRows } from '../note/residualTests';
 import { cautionTexts } from '../note/sections/cautions';
 import { solverWords } from '../note/sections/choices';
 import { withheldReasons } from '../note/tapErrors';
+import { comparableBands, comparableLimit } from '../pipeline/comparableLimit';
 import type { DesignResult } from '../pipeline/designResult';
 import type { EvidenceView, FiguresView, SpectrumView } from '../protocol/views';
 import { finiteDecibels, finiteOrNull } from './finiteOrNull';
@@ -11,13 +12,14 @@ import { decibelsOf } from './suitabilityView';
 
 /** @param figures of the same result */
 export function evidenceView(result: DesignResult, figures: FiguresView): EvidenceView {
-  const { heldOut, inspection, confidence, document, inputs, coefficients, sampleRate } = result;
+  const { heldOut, confidence, document, inputs, coefficients, sampleRate } = result;
   const { errors, residuals } = confidence;
   const withheld = 'withheld' in errors;
-  const attainable = inspection?.attainable ?? null;
+  const attainableDb = comparableLimit(result);
+  const attainableBands = comparableBands(result);
   return {
     ...figures,
-    limitDb: attainable?.attainableDb == null ? null : -attainable.attainableDb,
+    limitDb: attainableDb === null ? null : -attainableDb,
     askedDb: document.limits.heldOutNmse,
     disturbanceOnly: heldOut?.disturbanceOnly ?? false,
     outsideBandDb: finiteOrNull(heldOut?.outsideBandDb),
@@ -31,7 +33,7 @@ export function evidenceView(result: DesignResult, figures: FiguresView): Eviden
       from,
       to,
       reductionDb: finiteOrNull(reductionDb),
-      attainableDb: finiteOrNull(attainable?.bandsDb[b]),
+      attainableDb: finiteOrNull(attainableBands[b]),
     })),
     conditionNumber: Number.isFinite(result.conditionNumber) ? result.conditionNumber : Number.MAX_VALUE,
     method: solverWords[result.method],

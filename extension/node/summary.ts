@@ -4,6 +4,7 @@ import { decibels } from '../../core/figures/decibels';
 import { jobWords } from '../../core/figures/jobWords';
 import { counted, grouped, significant } from '../../core/figures/numbers';
 import { visible } from '../../core/figures/visible';
+import { comparableLimit } from '../../core/pipeline/comparableLimit';
 import type { DesignResult } from '../../core/pipeline/designResult';
 
 /** How the taps differ from those that are about to be overwritten, in a few lines for a terminal. */
@@ -42,7 +43,7 @@ export function designSummary(result: DesignResult): string {
   if (heldOut !== null && heldOut.outsideBandDb !== null) {
     rows.push(['', `outside the band: ${decibels(heldOut.outsideBandDb)}`]);
   }
-  const limit = result.inspection?.attainable.attainableDb ?? null;
+  const limit = comparableLimit(result);
   if (limit !== null)
     rows.push(['limit', `a reduction of about ${decibels(limit)} for any linear filter, by the coherence`]);
   rows.push(['target', targetLine(result)]);

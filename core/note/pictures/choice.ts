@@ -16,9 +16,10 @@ const mostLabels = 12;
 const depth = 40;
 
 /** Errors along length, delay and regularisation through the document's filter; null where there are none. */
-export function choicePicture({ choice, inspection }: DesignResult, mark: string): string | null {
+export function choicePicture({ choice, inspection, document }: DesignResult, mark: string): string | null {
   if (choice === null || 'withheld' in choice) return null;
-  const attainableDb = inspection?.attainable.attainableDb ?? null;
+  // Of all frequencies alike.
+  const attainableDb = document.prepare.band === null ? (inspection?.attainable.attainableDb ?? null) : null;
   const labels = ['cross-validated, with its standard error', 'fit'];
   if (attainableDb !== null) labels.push('attainable, from the coherence');
   const key = legend(labels, 36);

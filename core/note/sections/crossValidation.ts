@@ -1,18 +1,26 @@
+import type { Job } from '../../document/pairingDocument';
 import { decibels } from '../../figures/decibels';
 import { counted, grouped, significant } from '../../figures/numbers';
 import type { ChoiceLine, ChoiceLines } from '../../pipeline/choiceLines';
+import { hasBareFit } from '../../pipeline/comparableLimit';
 import type { DesignResult } from '../../pipeline/designResult';
 import { section, table, target } from '../markdown';
+
+const lines = ['length', 'delay', 'regularisation'] as const;
 
 /** Difference that is not worth a tap, as in the suggestion of `choose` (common practice). */
 const negligible = 0.05;
 
+const wantedSignal =
+  '**Caution:** no fit interval is marked `disturbanceOnly`, so the wanted signal, where it is in the fit, counts as error in these figures and makes differences look smaller than they are. Mark some of the fit, and the errors are taken over that alone.';
+
 /** The document's length, delay and regularisation held against others inside the fit intervals. */
-export function crossValidation({ choice, document }: DesignResult, folder: string): string {
+export function crossValidation({ choice, document, takes }: DesignResult, folder: string): string {
   if (choice === null) return '';
   const title = 'Held against other values';
-  if ('withheld' in choice) return section(title, `Not cross-validated. ${choice.withheld}`);
+  if ('withheld' in choice) return section(title, `Not cross-validated: ${choice.withheld}`);
   const { symmetry, fixedGain, windowing } = document.filter;
+  const hidden = document.job === 'cancel' && !takes.some(hasBareFit);
   const shaped = symmetry !== 'none' || fixedGain !== null || windowing !== 'covariance';
   const rows = [
     row('length', choice.length, (taps) => counted(taps, 'tap')),
@@ -31,7 +39,8 @@ export function crossValidation({ choice, document }: DesignResult, folder: stri
       'one step more',
       'least error',
     ]),
-    verdict(choice),
+    verdict(choice, document.job),
+    hidden ? wantedSignal : '',
     `![Cross-validated error and fit error against length, delay and regularisation](${target(`${folder}/choice.svg`)})`,
   );
 }
@@ -67,8 +76,10 @@ export function leastPlace({ crossDb, own }: ChoiceLine): number {
   return place;
 }
 
-function verdict(choice: ChoiceLines): string {
-  const better = (['length', 'delay', 'regularisation'] as const).flatMap((what) => {
+function verdict(choice: ChoiceLines, job: Job): string {
+  // The horizon of a prediction is what is wanted of it: a nearer one is easier and no better.
+  const free = job === 'predict' ? (['length', 'regularisation'] as const) : lines;
+  const better = free.flatMap((what) => {
     const line = choice[what];
     const place = leastPlace(line);
     const gain = line.crossDb[line.own] - line.crossDb[place];
@@ -79,7 +90,16 @@ function verdict(choice: ChoiceLines): string {
         : `a ${what} of ${significant(line.values[place])}`;
     return [`${value} would lower it by ${decibels(gain)}`];
   });
-  return better.length === 0
-    ? `No other value on these lines lowers the error by more than ${decibels(negligible)}.`
-    : `Of these values, each by itself, ${better.join('; ')}. What that costs in multiply-accumulates is for the engineer to weigh.`;
+  const horizon =
+    job === 'predict' && choice.delay.values.length > 1
+      ? ' The horizon is what the prediction is for, so a nearer one is not counted as better.'
+      : '';
+  if (better.length === 0) {
+    return `No other value on these lines lowers the error by more than ${decibels(negligible)}.${horizon}`;
+  }
+  const longer = leastPlace(choice.length) > choice.length.own && better[0].includes(' tap');
+  const cost = longer
+    ? ' What the longer filter costs in multiply-accumulates is for the engineer to weigh.'
+    : '';
+  return `Of these values, each by itself, ${better.join('; ')}.${cost}${horizon}`;
 }

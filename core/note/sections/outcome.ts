@@ -2,6 +2,7 @@ import { errorShares } from '../../evaluation/errorShares';
 import { decibels } from '../../figures/decibels';
 import { counted, grouped, noFigure, significant } from '../../figures/numbers';
 import { frequency } from '../../figures/units';
+import { comparableBands, limitDiffers } from '../../pipeline/comparableLimit';
 import type { DesignResult, ErrorFigure } from '../../pipeline/designResult';
 import { name, section, table } from '../markdown';
 import { residualTests } from '../residualTests';
@@ -79,9 +80,18 @@ function figures({ fit, heldOut, takes }: DesignResult): string {
   ]);
 }
 
+const incomparable = {
+  band: 'the coherence knows of no weighting to a band; the table by band has it for each',
+  'wanted signal':
+    'no fit interval is marked `disturbanceOnly`, so the wanted signal may be in the coherence of the fit data and is not in the held-out figures',
+};
+
 /** What no filter could exceed, beside what this one reaches. */
-function limit({ inspection }: DesignResult): string {
+function limit(result: DesignResult): string {
+  const { inspection } = result;
   if (inspection === null) return '';
+  const differs = limitDiffers(result);
+  if (differs !== null) return `**Attainable:** not shown, since ${incomparable[differs]}.`;
   const { attainableDb, atLeastDb, attainableReason } = inspection.attainable;
   if (attainableDb !== null) {
     return `**Attainable:** the coherence of the fit data allows a reduction of about ${decibels(attainableDb)} by a linear filter of any length. Where the filter comes near it, more taps cannot help.`;
@@ -94,6 +104,7 @@ function bands(result: DesignResult): string[] {
   const { heldOut, spectra, inspection } = result;
   if (heldOut === null || heldOut.bands.length === 0) return [];
   const shares = errorShares(spectra);
+  const attainable = comparableBands(result);
   const unknown = (from: number, to: number) =>
     inspection?.unknownBands.some((band) => band.from < to && band.to > from) ? ' (in part unknown)' : '';
   const caution = wantedSignalHides(result) ? ' The caution above holds for every row.' : '';
@@ -104,7 +115,7 @@ function bands(result: DesignResult): string[] {
       heldOut.bands.map(({ from, to, reductionDb }, b) => [
         `${frequency(from)} to ${frequency(to)}${unknown(from, to)}`,
         decibels(reductionDb),
-        decibels(inspection?.attainable.bandsDb[b] ?? null),
+        decibels(attainable[b] ?? null),
         decibels(shares[b]?.shareDb ?? null),
       ]),
       ['reduction', 'attainable', 'share of the error'],

@@ -36,6 +36,8 @@ export function unprovenGain(
       return most;
     };
     const proven = largest(false, bands);
+    // Empty everywhere: nothing to compare with, and `poor-excitation` says so.
+    if (proven === 0) return [];
     const guilty = bands.filter((band) => largest(true, [band]) > share * proven);
     if (guilty.length === 0) return [];
     const { recording, channel } = take.inputs[r];

@@ -50,7 +50,8 @@ export function lagFinding(
   const missed = tap > length - 1 || tap < earliest;
   const spare = spareTaps(length);
   const wasteful = job !== 'equalise' && whole + delay > (timing.twoClocks ? spare : length / 2);
-  if (!missed && !wasteful) return null;
+  const offer = spare - whole;
+  if ((!missed && !wasteful) || offer === delay) return null;
   const size = Math.abs(samples);
   return finding(
     'lag',
@@ -62,7 +63,7 @@ export function lagFinding(
         ? `the filter reaches lags of ${-delay} to ${length - 1 - delay} only`
         : `the first ${whole + delay} of its ${length} taps are spent on waiting for it`,
       start: timing.twoClocks ? ' The files were started separately, which may be part of it.' : '',
-      offer: spare - whole,
+      offer,
       spare,
     },
     { take: take.name, path: ['filter', 'delay'] },

@@ -61,7 +61,29 @@ describe('the design note', () => {
     const withheld = note({}, (result) => {
       result.choice = { withheld: 'Too short.' };
     });
-    expect(sectionOf(withheld, 'Held against other values')).toContain('Not cross-validated. Too short.');
+    expect(sectionOf(withheld, 'Held against other values')).toContain('Not cross-validated: Too short.');
+  });
+
+  it('says that the wanted signal hides differences, and counts no nearer horizon as better', () => {
+    const held = (change: (result: DesignResult) => void) =>
+      sectionOf(
+        note({}, (result) => {
+          result.choice = sampleChoice();
+          change(result);
+        }),
+        'Held against other values',
+      );
+    const hides = 'makes differences look smaller';
+    const mark = (result: DesignResult, bare: boolean) => {
+      for (const take of result.takes) take.disturbanceOnly = bare ? take.fit : [];
+    };
+    expect(held((result) => mark(result, false))).toContain(hides);
+    expect(held((result) => mark(result, true))).not.toContain(hides);
+    const predicted = held((result) => {
+      result.document.job = 'predict';
+    });
+    expect(predicted).toContain('No other value on these lines lowers the error by more than 0.05 dB.');
+    expect(predicted).not.toContain('a delay of 1 would');
   });
 
   it('says in the verdict whether limits are met', () => {

@@ -56,6 +56,23 @@ describe('elements of a matrix that is not formed', () => {
     expect(roundingCost(byProducts, targets, cost)).toBeLessThan(roundingCost(plain, targets, cost));
   });
 
+  it('are not followed without end where they promise gains without end', () => {
+    const size = 50;
+    const targets = normals(7, size).map((value) => 30 * value);
+    let asked = 0;
+    const near = (i: number, j: number) => {
+      asked++;
+      return (i + j) % 2 === 0 ? 3 : -3;
+    };
+    // A true gradient of three times the diagonal gives a reason for the first steps.
+    const multiply = (v: Float64Array) => v.map((value) => 3 * value);
+    const products = { diagonal: new Float64Array(size).fill(1), multiply, near };
+    const cost = { size, element: (i: number, j: number) => Number(i === j), factor: null, products };
+    roundErrorAware(targets, cost, wordRange(8));
+    expect(asked).toBeGreaterThan(0);
+    expect(asked).toBeLessThanOrEqual(4 * size * (size - 1));
+  });
+
   it('round nearly as well by near elements, and never worse than plain', async () => {
     const { system, structure } = await structured(60);
     const element = elementsOf(system, 0.001);
