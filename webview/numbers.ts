@@ -16,6 +16,10 @@ export type Checked<T> = { value: T } | { error: string };
 
 const form = /^[+-]?(\d+([.,]\d*)?|[.,]\d+)(e[+-]?\d+)?$/i;
 
+/** What may be a thousand as the page shows it, or a decimal comma. */
+const thousands = /^[+−–-]?[1-9]\d{0,2},\d{3}$/;
+const dottedThousands = /^[+−–-]?[1-9]\d{0,2}\.\d{3}$/;
+
 /** The number of a text, with a decimal point or comma and no separators between thousands; null where it is none. */
 export function parseNumber(text: string): number | null {
   const plain = text.trim().replace(/^[−–]/, '-').replace(/e[−–]/i, 'e-');
@@ -31,6 +35,8 @@ export function checkNumber(text: string, rule: NumberRule): Checked<number | nu
     return rule.optional ? { value: null } : { error: t('Nothing is given when a number is expected.') };
   }
   const value = parseNumber(got);
+  const read = thousands.test(got) || (rule.whole && dottedThousands.test(got));
+  if (value !== null && read) return { error: ambiguous(got, rule) };
   if (value === null) return { error: t('Got {0} when a number is expected.', got) };
   if (rule.whole && !Number.isInteger(value)) {
     return { error: t('Got {0} when a whole number is expected.', got) };
@@ -38,6 +44,13 @@ export function checkNumber(text: string, rule: NumberRule): Checked<number | nu
   const low = rule.above ? value <= rule.min : value < rule.min;
   if (low || value > rule.max) return { error: t('Got {0} when {1} is expected.', got, rangeInWords(rule)) };
   return { value: value === 0 ? 0 : value };
+}
+
+function ambiguous(got: string, { whole }: NumberRule): string {
+  const joined = got.replace(/[.,]/, '');
+  return whole
+    ? t('Got {0} when a whole number without separators is expected: {1}.', got, joined)
+    : t('{0} can be read in two ways. Write {1} or {2}.', got, joined, got.replace(',', '.'));
 }
 
 /** Several numbers between semicolons or blanks; commas are decimal. Null where the field is empty. */

@@ -36,7 +36,7 @@ export const checkSentences = table({
   },
   different: {
     severity: 'blocker',
-    says: 'solved again, {what} differs from what was written: got {got} when expected {expected}. Write the files again.',
+    says: 'solving again changes {what}: got {got} when expected {expected}. Write the files again.',
   },
   'inputs-differ': {
     severity: 'blocker',

@@ -150,6 +150,7 @@ export const phrases: readonly string[] = [
   'the quantisation loss',
   'the taps',
   'another number of taps',
+  'as many as are written',
   'a relative difference of {0}',
   'its width',
   'its lower edge, so close to 0 Hz,',

@@ -66,7 +66,9 @@ export async function askRate(a: RecordingHead, b: RecordingHead): Promise<numbe
     title: vscode.l10n.t('Sample rate'),
     prompt: vscode.l10n.t('The files do not say it. Samples a second, in Hz'),
     validateInput: (given) =>
-      numberFrom(given) === null ? vscode.l10n.t('Got "{0}" when expected a number above 0.', given) : null,
+      numberFrom(given) === null
+        ? vscode.l10n.t('Got "{0}" when expected a number above 0, without separators.', given)
+        : null,
   });
   return text === undefined ? 'cancelled' : numberFrom(text)!;
 }

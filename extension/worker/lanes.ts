@@ -88,7 +88,7 @@ async function readColumns(
   }
 }
 
-/** Runs the last fit over a stretch of a take. */
+/** Runs the last fit over a stretch of a take; NaN where the delay asks for desired samples beyond the recording. */
 export async function eachRun(
   left: SessionResults,
   take: number,
@@ -103,8 +103,11 @@ export async function eachRun(
   const { coefficients, means, delay } = fit.filter;
   if (coefficients.length !== of.inputs.length) throw new Error('the filter is of other inputs');
   const reader = signalReader(of, { means, delay });
+  const recorded = of.desired.recording.samples;
   await filterStretch(reader, { from, to }, coefficients, pace, ({ from: at, desired, output }) => {
-    const error = desired.map((value, n) => value - output[n]);
-    visit({ target: desired, output, error }, at);
+    const first = at - delay;
+    const target = desired.map((value, n) => (first + n >= 0 && first + n < recorded ? value : Number.NaN));
+    const error = target.map((value, n) => value - output[n]);
+    visit({ target, output, error }, at);
   });
 }

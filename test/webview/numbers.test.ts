@@ -29,11 +29,27 @@ describe('numbers in fields', () => {
     expect(checkNumber('64', length)).toEqual({ value: 64 });
     expect(checkNumber('', length)).toEqual({ error: 'Nothing is given when a number is expected.' });
     expect(checkNumber('long', length)).toEqual({ error: 'Got long when a number is expected.' });
-    expect(checkNumber('1,024', length)).toEqual({ error: 'Got 1,024 when a whole number is expected.' });
+    expect(checkNumber('1.5', length)).toEqual({ error: 'Got 1.5 when a whole number is expected.' });
     expect(checkNumber('0', length)).toEqual({ error: 'Got 0 when 1 to 65,536 is expected.' });
     expect(checkNumber('0', { min: 0, above: true, max: 5 })).toEqual({
       error: 'Got 0 when above 0, up to 5 is expected.',
     });
+  });
+
+  it('does not take a thousand, as figures are shown, for a decimal comma', () => {
+    const amplitude = { min: 0, above: true, max: 1e30 };
+    const twofold = { error: '32,768 can be read in two ways. Write 32768 or 32.768.' };
+    expect(checkNumber('32,768', amplitude)).toEqual(twofold);
+    expect(checkNumbers('1; 32,768', amplitude)).toEqual(twofold);
+    expect(checkNumber('−1,000', { min: -2e3, max: 2e3 })).toHaveProperty('error');
+    for (const text of ['1,000', '1.000']) {
+      expect(checkNumber(text, { min: 0, max: 65_536, whole: true })).toEqual({
+        error: `Got ${text} when a whole number without separators is expected: 1000.`,
+      });
+    }
+    expect(checkNumber('0,125', amplitude)).toEqual({ value: 0.125 });
+    expect(checkNumber('32,76', amplitude)).toEqual({ value: 32.76 });
+    expect(checkNumber('32.768', amplitude)).toEqual({ value: 32.768 });
   });
 
   it('lets an optional field be empty and knows no negative zero', () => {

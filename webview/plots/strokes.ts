@@ -16,10 +16,10 @@ const chart = (colour: string) => [`--vscode-charts-${colour}`, ...foreground];
 
 const strokes: Record<Role, Stroke[]> = {
   input: [
-    { width: 1, dash: [1, 2], fill: 0, variables: chart('blue') },
-    { width: 1, dash: [1, 4], fill: 0, variables: chart('purple') },
-    { width: 1, dash: [2, 3], fill: 0, variables: chart('yellow') },
-    { width: 1, dash: [1, 2, 1, 5], fill: 0, variables: chart('green') },
+    { width: 1.5, dash: [2, 2], fill: 0, variables: chart('blue') },
+    { width: 1.5, dash: [2, 4], fill: 0, variables: chart('purple') },
+    { width: 1.5, dash: [4, 3], fill: 0, variables: chart('yellow') },
+    { width: 1.5, dash: [2, 2, 2, 5], fill: 0, variables: chart('green') },
   ],
   desired: [{ width: 1, dash: [], fill: 0, variables: foreground }],
   output: [{ width: 2.5, dash: [], fill: 0, variables: chart('green') }],

@@ -61,11 +61,12 @@ function build(data: TableData): HTMLElement[] {
   const table = make('table');
   table.append(make('caption', '', data.caption));
   const head = make('tr');
-  for (const { label } of data.columns) {
-    const cell = make('th', '', label);
+  const first = data.rows > 0 ? data.row(0) : [];
+  data.columns.forEach(({ label }, column) => {
+    const cell = make('th', typeof first[column] === 'number' ? 'number' : '', label);
     cell.scope = 'col';
     head.append(cell);
-  }
+  });
   table.createTHead().append(head);
   const body = table.createTBody();
   for (const index of shownRows) {
@@ -83,7 +84,7 @@ function build(data: TableData): HTMLElement[] {
   scroller.append(table);
   if (shownRows.length === data.rows) return [scroller];
   const note = t(
-    'Shown are {0} of {1} rows, evenly spaced; all of them are copied.',
+    '{0} of {1} rows are shown, evenly spaced; all of them are copied.',
     grouped(shownRows.length),
     grouped(data.rows),
   );

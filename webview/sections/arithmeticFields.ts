@@ -12,7 +12,7 @@ import { t } from '../words';
 export function arithmeticFields({ edit, fields, state }: PageContext): Field[] {
   const amplitude = { min: 0, above: true, max: 1e30, optional: true };
   const overflow = [
-    { value: 'saturate', label: t('saturate: stay at the end of the range') },
+    { value: 'saturate', label: t('saturate: clip to the range') },
     { value: 'wrap', label: t('wrap: keep the low bits') },
   ];
   const drawn = t('from the recordings');

@@ -19,7 +19,10 @@ export function figureTables(view: EvidenceView): HTMLElement[] {
   if (view.outsideBandDb !== null) {
     rows.push([t('outside the band'), decibels(view.outsideBandDb), t('not weighed in the fit')]);
   }
-  rows.push([t('condition number'), plain(view.conditionNumber, 3), phrase(view.method)]);
+  const solution = [
+    [t('condition number'), plain(view.conditionNumber, 3)],
+    [t('solved by'), phrase(view.method)],
+  ];
   const takes = view.takes.map(({ name, nmseDb, standardErrorDb, samples }) => [
     name,
     decibelsWithError(nmseDb, standardErrorDb),
@@ -48,6 +51,7 @@ export function figureTables(view: EvidenceView): HTMLElement[] {
     ...(wanted ? [wanted] : []),
     table(t('NMSE by take'), [t('take'), t('NMSE'), t('samples')], takes, [1, 2]),
     table(t('Reduction by band'), [t('band'), t('reduction'), t('attainable')], bands, [1, 2]),
+    table(t('Solution'), [t('what'), t('value')], solution),
   ];
 }
 

@@ -11,12 +11,11 @@ export function takeLanes(
   takeNumber: number,
   stamp: number,
 ): LanesData {
+  const single = take.tracks.filter(({ role }) => role === 'input').length === 1;
+  const inputName = (index: number) => (single ? t('input') : t('input {0}', index + 1));
   const lanes = take.tracks.map(({ role, index, file, channel, min, max }) => ({
     lane: role === 'input' ? `input:${index}` : 'desired',
-    label:
-      role === 'input'
-        ? t('input {0}: {1} · {2}', index + 1, file, channel)
-        : t('desired: {0} · {1}', file, channel),
+    label: t('{0}: {1} · {2}', role === 'input' ? inputName(index) : t('desired'), file, channel),
     role,
     min,
     max,

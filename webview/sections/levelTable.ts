@@ -40,7 +40,7 @@ export function fileTable(files: readonly FileView[]): HTMLElement {
   const rows = files.map(({ file, format, samples, sampleRate, channels }) => [
     file,
     phrase(format),
-    sampleRate === null ? t('not said') : t('{0} Hz', plain(sampleRate, 8)),
+    sampleRate === null ? t('not given') : t('{0} Hz', plain(sampleRate, 8)),
     count(samples),
     String(channels.length),
   ]);

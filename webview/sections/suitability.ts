@@ -89,7 +89,12 @@ function coherenceCurves(pair: Pair) {
 }
 
 function unknown({ unknownBands }: Pair): Mark[] {
-  return unknownBands.map(({ from, to }) => ({ kind: 'span', from, to, label: t('nothing known here') }));
+  return unknownBands.map(({ from, to }) => ({
+    kind: 'span',
+    from,
+    to,
+    label: t('the model says nothing here'),
+  }));
 }
 
 function timingTable(pair: Pair): HTMLElement {
@@ -108,14 +113,16 @@ function attainable(pair: Pair): HTMLElement[] {
   const whole =
     pair.attainableDb === null
       ? t('Attainable reduction not known: {0}', phrase(pair.reason ?? ''))
-      : t('No linear filter takes off more than {0}.', decibels(pair.attainableDb));
+      : t('No linear filter takes off more than about {0}.', decibels(pair.attainableDb));
   if (pair.bands.length === 0) return [el('p', {}, whole)];
   const bands = pair.bands.map(({ from, to, attainableDb }) => [
     t('{0} to {1} Hz', plain(from), plain(to)),
     decibels(attainableDb),
   ]);
+  const untold = pair.bands.some(({ attainableDb }) => attainableDb === null);
   return [
     el('p', {}, whole),
     table(t('Attainable reduction by band'), [t('band'), t('attainable')], bands, [1]),
+    ...(untold ? [el('p', { class: 'rest' }, t('–: too little recorded to tell.'))] : []),
   ];
 }

@@ -117,7 +117,7 @@ function impulse(lines: readonly TapsLine[], palette: Palette): string[] {
   const zero = coordinate(place.y(0));
   const single = lines.length === 1 && lines[0].taps.length <= stemsUpTo;
   return [
-    ...axes(place, 'w[k] over k', palette),
+    ...axes(place, 'w[k]', palette),
     `<path d="M${place.left},${zero}H${place.right}" stroke="${palette.ink}" stroke-width="0.75"/>`,
     ...lines.map(({ taps, first }, i) => {
       const x = Float64Array.from(taps, (_, k) => first + k);
@@ -139,7 +139,7 @@ function magnitude(lines: readonly TapsLine[], sampleRate: number, palette: Pale
   const place = panel(282, width - 12, [0, highest], range);
   const x = Float64Array.from({ length: points }, (_, i) => (highest * i) / (points - 1));
   return [
-    ...axes(place, `|H| in dB over ${unit}`, palette),
+    ...axes(place, `|H| in dB, f in ${unit}`, palette),
     ...rows.map((row, i) => curve(place, x, raised(row, range[0]), i, palette)),
   ];
 }

@@ -177,7 +177,7 @@ export function besideFlows(flow: Flow): void {
   flow('solves again when a pairing is saved, and as a task', async (workbench) => {
     await openCurrentHeader(workbench);
     const taps = workbench.files.read(tapsFile);
-    const problem = 'solved again, the taps differ';
+    const problem = 'solving again changes the taps';
     workbench.files.write('.vscode/settings.json', '{ "tapwright.check.onSave": true }');
     workbench.files.write(tapsFile, solvedOtherwise(taps));
     const text = workbench.files.read('belt.pairing.json');

@@ -131,6 +131,29 @@ describe('the worker', () => {
     expect(told).toContainEqual(expect.objectContaining({ type: 'part', part: 'evidence', failed: true }));
   });
 
+  it('shows no error where the delay asks for samples beyond the recording', async () => {
+    for (const [delay, from, beyond] of [
+      [-8, 19_190, [2, 3, 4, 5, 6, 7, 8, 9]],
+      [3, 0, [0, 1, 2]],
+    ] as const) {
+      await update(
+        edited(({ filter }) => {
+          Object.assign(filter, { length: 8, delay });
+        }),
+      );
+      const run = {
+        session: 'a',
+        take: 0,
+        lanes: ['target', 'output', 'error'] as const,
+        from,
+        to: from + 10,
+      };
+      const { lanes } = unpack<Envelope>(await call.envelope({ ...run, lanes: [...run.lanes], columns: 10 }));
+      const missing = lanes.map(({ low }) => [...low].flatMap((value, n) => (Number.isNaN(value) ? n : [])));
+      expect(missing).toEqual([beyond, [], beyond]);
+    }
+  });
+
   it('gives envelopes that hold every sample, from afar and from near', async () => {
     await update(text());
     const whole = unpack<Envelope>(
@@ -161,8 +184,8 @@ describe('the worker', () => {
         session: 'a',
         take: 0,
         lanes: ['target', 'output', 'error'],
-        from: 90_000,
-        to: 90_100,
+        from: 9_000,
+        to: 9_100,
         columns: 400,
       }),
     );
