@@ -14,6 +14,8 @@ export default defineConfig({
           include: ['test/**/*.test.ts'],
           exclude: ['test/e2e/**'],
           isolate: false,
+          // One fewer than the processors is the default, which of two leaves one idle.
+          maxWorkers: '100%',
         },
       },
       {
