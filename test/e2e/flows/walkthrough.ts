@@ -36,6 +36,7 @@ export function walkthroughFlows(flow: Flow): void {
     for (const name of Object.values(steps)) await isDone(name);
     await workbench.screenshot('walkthrough');
     // Quick open would offer the copy, which is gone, to the flows that follow.
+    await palette.run('View: Close All Editors');
     await palette.run('Clear Editor History');
     await page.locator('.monaco-dialog-box').getByRole('button', { name: 'Clear', exact: true }).click();
   });
