@@ -1,6 +1,6 @@
 import type { Job, PairingDocument } from '../document/pairingDocument';
+import { hasBareFit } from '../evaluation/measuredRuns';
 import { type Finding, finding } from '../findings/finding';
-import { intersect } from '../pair/intervals';
 import type { Take } from '../pair/take';
 import type { Grid } from './grid';
 import type { Suggestion } from './suggest';
@@ -28,8 +28,9 @@ export function edgeFindings(
 
 /** Says so where the wanted signal of a canceller may be in what candidates are judged by. */
 export function wantedSignalFindings(job: Job, takes: readonly Take[]): Finding[] {
-  const bare = takes.some((take) => intersect(take.fit, take.disturbanceOnly).length > 0);
-  return job === 'cancel' && !bare ? [finding('choice-hidden', {}, { path: ['takes', 0] })] : [];
+  return job === 'cancel' && !takes.some(hasBareFit)
+    ? [finding('choice-hidden', {}, { path: ['takes', 0] })]
+    : [];
 }
 
 /** Says so where the document asks for something that the candidates leave out of account. */

@@ -1,9 +1,6 @@
-import { powerDecibels } from '../figures/decibels';
+import { decibelsOfE, powerDecibels } from '../figures/decibels';
 import { type Candidate, crossValidated, crossValidatedError, fitted } from './candidate';
 import type { SearchResult } from './searchResult';
-
-/** 10 / ln 10: a relative error in decibels, to first order. */
-export const decibelsOfE = 4.342944819032518;
 
 /** Errors of some candidates in dB; NaN where a candidate is not in the grid or could not be solved. */
 export interface ErrorCurve {

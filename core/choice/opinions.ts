@@ -1,4 +1,4 @@
-import { powerDecibels } from '../figures/decibels';
+import { decibelsOfE, powerDecibels } from '../figures/decibels';
 import { type Candidate, candidatesOf, fitted, least } from './candidate';
 import type { SearchResult } from './searchResult';
 
@@ -11,9 +11,6 @@ export interface Opinion {
   delay: number;
   regularisation: number;
 }
-
-/** 10 / ln 10. */
-const decibelsOfE = 4.342944819032518;
 
 /**
  * Second opinions, from the error of the fit E over N samples and the q unknowns that the regularisation leaves free

@@ -1,6 +1,7 @@
 import type { Job } from '../document/pairingDocument';
+import { bareFit, hasBareFit } from '../evaluation/measuredRuns';
 import { type Finding, finding } from '../findings/finding';
-import { type Interval, intersect } from '../pair/intervals';
+import type { Interval } from '../pair/intervals';
 import type { Take } from '../pair/take';
 import type { Layout } from './blockSums';
 import { commonSegments, cutFolds, type Folds, samplesOf } from './folds';
@@ -82,6 +83,5 @@ export function planSearch(
  * taken over these.
  */
 function measuredFor(takes: readonly Take[], job: Job): ((take: Take) => Interval[]) | null {
-  const bare = (take: Take) => intersect(take.fit, take.disturbanceOnly);
-  return job === 'cancel' && takes.some((take) => bare(take).length > 0) ? bare : null;
+  return job === 'cancel' && takes.some(hasBareFit) ? bareFit : null;
 }

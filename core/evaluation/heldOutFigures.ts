@@ -1,3 +1,4 @@
+import { decibelsOfE } from '../figures/decibels';
 import { type TargetFilter, targetSimulator } from '../numbers/targetFilter';
 import type { Pace } from '../pace';
 import { welchSegment } from '../spectra/welch';
@@ -125,6 +126,6 @@ function takeFigure(tally: ErrorTally): ErrorFigure & { standardErrorDb: number 
   return {
     ...errorFigure(tally.samples, tally.errorEnergy, tally.desiredEnergy),
     // To first order: d(10 log10 r) = (10 / ln 10) dr / r.
-    standardErrorDb: relative === null ? null : 4.342944819032518 * relative,
+    standardErrorDb: relative === null ? null : decibelsOfE * relative,
   };
 }

@@ -43,6 +43,16 @@ export function bareHeldOut({ heldOut, disturbanceOnly }: Take): Interval[] {
   return intersect(heldOut, disturbanceOnly);
 }
 
+/** The part of the fit that is known to be without the wanted signal. */
+export function bareFit({ fit, disturbanceOnly }: Pick<Take, 'fit' | 'disturbanceOnly'>): Interval[] {
+  return intersect(fit, disturbanceOnly);
+}
+
+/** Whether some of the fit is known to be without the wanted signal. */
+export function hasBareFit(take: Pick<Take, 'fit' | 'disturbanceOnly'>): boolean {
+  return bareFit(take).length > 0;
+}
+
 /** Where {@link heldOutRuns} are taken, as intervals, whatever the filter. */
 export function heldOutIntervals(takes: readonly Take[], job: Job): (take: Take) => Interval[] {
   const hasBare = takes.some((take) => bareHeldOut(take).length > 0);

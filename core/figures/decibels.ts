@@ -1,5 +1,8 @@
 import { fixed, noFigure } from './numbers';
 
+/** 10 / ln 10: a relative error in decibels, to first order. */
+export const decibelsOfE = 4.342944819032518;
+
 /** A figure in decibels as files hold it: rounded to two digits after the point; null where it is not finite. */
 export function roundedDecibels(value: number | null | undefined): number | null {
   return value === null || value === undefined || !Number.isFinite(value) ? null : Number(fixed(value, 2));

@@ -1,6 +1,5 @@
 import { crossValidated, crossValidatedError, fitted } from '../choice/candidate';
-import { decibelsOfE } from '../choice/errorCurve';
-import { powerDecibels, roundedDecibels } from '../figures/decibels';
+import { decibelsOfE, powerDecibels, roundedDecibels } from '../figures/decibels';
 import { fixed } from '../figures/numbers';
 import type { Choice } from '../pipeline/choose';
 import { macsPerSample } from './filterCost';

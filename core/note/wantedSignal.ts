@@ -1,4 +1,5 @@
-import { intersect, totalLength } from '../pair/intervals';
+import { bareFit } from '../evaluation/measuredRuns';
+import { totalLength } from '../pair/intervals';
 import type { DesignResult, TakeSummary } from '../pipeline/designResult';
 
 /** True where the wanted signal is in the figures of held-out data and hides the disturbance. */
@@ -8,8 +9,7 @@ export function wantedSignalHides({ document, heldOut }: DesignResult): boolean 
 
 /** True where the wanted signal may be in the fit intervals, so that fit and held-out figures cannot be compared. */
 export function wantedSignalInFit({ document, takes }: DesignResult): boolean {
-  const bare = (take: TakeSummary) =>
-    totalLength(intersect(take.fit, take.disturbanceOnly)) === totalLength(take.fit);
+  const bare = (take: TakeSummary) => totalLength(bareFit(take)) === totalLength(take.fit);
   return document.job === 'cancel' && !takes.every(bare);
 }
 

@@ -1,7 +1,7 @@
 import { newSpectrum, type Spectrum } from '../statistics/blockSpectra';
 import { sizeFor, type Transform, transformOf } from '../statistics/transform';
 import { limb, splitRows } from './limbs';
-import { powerOfTwo } from './words';
+import { powerOfTwo, roundHalfUp } from './words';
 
 /**
  * `Σ_r Σ_k v_r[k] x_r[n-k]` for every n, exactly, as whole numbers in doubles. The inputs begin with M-1 samples of
@@ -51,7 +51,7 @@ function errorBound(values: readonly Float64Array[], largest: number, size: numb
 function roundedSums(sumsOf: ExactSums): ExactSums {
   return (inputs) => {
     const sums = sumsOf(inputs);
-    for (let n = 0; n < sums.length; n++) sums[n] = Math.floor(sums[n] + 0.5);
+    for (let n = 0; n < sums.length; n++) sums[n] = roundHalfUp(sums[n]);
     return sums;
   };
 }

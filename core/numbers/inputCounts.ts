@@ -1,5 +1,5 @@
 import type { Scaling } from './scaling';
-import { wordRange } from './words';
+import { roundHalfUp, wordRange } from './words';
 
 /**
  * What the firmware's filter sees of a raw signal: `clamp(floor(raw/q + ½) - floor(mean/q + ½))` to the input word.
@@ -16,7 +16,7 @@ export function inputCounts(
   const mean = scaling.inputMeanCounts[input];
   const counts = new Float64Array(raw.length);
   for (let n = 0; n < raw.length; n++) {
-    const count = Math.floor(raw[n] / q + 0.5) - mean;
+    const count = roundHalfUp(raw[n] / q) - mean;
     counts[n] = Math.max(min, Math.min(max, count));
   }
   return counts;

@@ -1,5 +1,5 @@
-import { intersect, totalLength } from '../pair/intervals';
-import type { DesignResult, TakeSummary } from './designResult';
+import { hasBareFit } from '../evaluation/measuredRuns';
+import type { DesignResult } from './designResult';
 
 /** Why the reduction that the coherence allows says nothing about the held-out figures. */
 export type LimitDiffers = 'band' | 'wanted signal';
@@ -16,11 +16,6 @@ export function limitDiffers({
   if (document.prepare.band !== null) return 'band';
   if (document.job !== 'cancel' || !heldOut?.disturbanceOnly) return null;
   return takes.some(hasBareFit) ? null : 'wanted signal';
-}
-
-/** Whether some of the fit is known to be without the wanted signal. */
-export function hasBareFit({ fit, disturbanceOnly }: TakeSummary): boolean {
-  return totalLength(intersect(fit, disturbanceOnly)) > 0;
 }
 
 /** The most that a linear filter of any length could take off the held-out data, in dB; null where that is not known. */

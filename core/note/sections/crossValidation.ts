@@ -1,8 +1,8 @@
 import type { Job } from '../../document/pairingDocument';
+import { hasBareFit } from '../../evaluation/measuredRuns';
 import { decibels } from '../../figures/decibels';
 import { counted, grouped, significant } from '../../figures/numbers';
 import type { ChoiceLine, ChoiceLines } from '../../pipeline/choiceLines';
-import { hasBareFit } from '../../pipeline/comparableLimit';
 import type { DesignResult } from '../../pipeline/designResult';
 import { section, table, target } from '../markdown';
 
@@ -88,7 +88,9 @@ function verdict(choice: ChoiceLines, job: Job): string {
       what === 'length'
         ? counted(line.values[place], 'tap')
         : `a ${what} of ${significant(line.values[place])}`;
-    return [`${value} would lower it by ${decibels(gain)}`];
+    return [
+      { longer: what === 'length' && place > line.own, says: `${value} would lower it by ${decibels(gain)}` },
+    ];
   });
   const horizon =
     job === 'predict' && choice.delay.values.length > 1
@@ -97,9 +99,8 @@ function verdict(choice: ChoiceLines, job: Job): string {
   if (better.length === 0) {
     return `No other value on these lines lowers the error by more than ${decibels(negligible)}.${horizon}`;
   }
-  const longer = leastPlace(choice.length) > choice.length.own && better[0].includes(' tap');
-  const cost = longer
+  const cost = better.some(({ longer }) => longer)
     ? ' What the longer filter costs in multiply-accumulates is for the engineer to weigh.'
     : '';
-  return `Of these values, each by itself, ${better.join('; ')}.${cost}${horizon}`;
+  return `Of these values, each by itself, ${better.map(({ says }) => says).join('; ')}.${cost}${horizon}`;
 }

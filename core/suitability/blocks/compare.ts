@@ -1,5 +1,5 @@
 import { relativeStandardError } from '../../evaluation/errorTally';
-import { powerDecibels } from '../../figures/decibels';
+import { decibelsOfE, powerDecibels } from '../../figures/decibels';
 import { studentPoint } from './studentPoint';
 
 /** By how much one filter leaves less error than another over the same blocks, none of which either was fitted to. */
@@ -25,7 +25,7 @@ export function compareErrors(better: readonly number[], other: readonly number[
   return {
     gainDb: powerDecibels(sum(desired) / sum(error)),
     // To first order: d(10 log10 r) = (10 / ln 10) dr / r.
-    standardErrorDb: 4.342944819032518 * relative,
+    standardErrorDb: decibelsOfE * relative,
     blocks: error.length,
   };
 }

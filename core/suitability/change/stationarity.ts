@@ -1,7 +1,8 @@
 import type { PairingDocument } from '../../document/pairingDocument';
+import { bareFit } from '../../evaluation/measuredRuns';
 import type { Finding } from '../../findings/finding';
 import type { Pace } from '../../pace';
-import { type Interval, intersect } from '../../pair/intervals';
+import type { Interval } from '../../pair/intervals';
 import { type Means, type Signals, signalReader } from '../../pair/signals';
 import type { Take, Track } from '../../pair/take';
 import { powerFinding, responseFinding } from './changeFindings';
@@ -24,7 +25,7 @@ export async function stationarityFindings(
   const findings: Finding[] = [];
   for (const [t, take] of takes.entries()) {
     // The wanted signal comes and goes as it likes.
-    const bare = document.job === 'cancel' ? intersect(take.fit, take.disturbanceOnly) : take.fit;
+    const bare = document.job === 'cancel' ? bareFit(take) : take.fit;
     const read = signalReader(take, { means, delay: 0 });
     const check = async (track: Track, pick: (signals: Signals) => Float64Array, where: Interval[]) => {
       const change = await powerChange(read, pick, where, pace);

@@ -1,4 +1,4 @@
-import { powerDecibels } from '../../figures/decibels';
+import { decibelsOfE, powerDecibels } from '../../figures/decibels';
 import type { RungFigure, Share } from './rungFigure';
 
 /** Why a figure is withheld. */
@@ -93,5 +93,5 @@ function reduction({ left }: Share): number {
 
 /** To first order: d(10 log10 r) = (10 / ln 10) dr / r. */
 function errorDb({ error }: Share): number {
-  return 4.342944819032518 * error;
+  return decibelsOfE * error;
 }

@@ -1,7 +1,7 @@
 import type { Job } from '../../document/pairingDocument';
+import { bareFit, hasBareFit } from '../../evaluation/measuredRuns';
 import type { Finding } from '../../findings/finding';
 import type { Pace } from '../../pace';
-import { type Interval, intersect } from '../../pair/intervals';
 import type { Means } from '../../pair/signals';
 import type { Take } from '../../pair/take';
 import type { CrossSpectra } from '../../spectra/crossSpectra';
@@ -66,11 +66,11 @@ export interface InspectedSpectra {
 /** Coherence, attainable reduction, excitation, noise on the input and spectral nulls of a pairing's fit intervals. */
 export async function inspectSpectra(request: SpectraRequest, pace: Pace): Promise<InspectedSpectra> {
   const { takes, job, filter, means, sampleRate } = request;
-  const bare = job === 'cancel' && takes.some((take) => disturbance(take).length > 0);
-  const chosen = bare ? takes.filter((take) => disturbance(take).length > 0) : takes;
+  const bare = job === 'cancel' && takes.some(hasBareFit);
+  const chosen = bare ? takes.filter(hasBareFit) : takes;
   const aligned = [];
   for (const take of chosen) {
-    const intervals = bare ? disturbance(take) : take.fit;
+    const intervals = bare ? bareFit(take) : take.fit;
     const lag = job === 'predict' ? 0 : Math.round(request.lags[takes.indexOf(take)]);
     const first = alignTake(take, lag, intervals);
     const centred = job === 'predict' ? 0 : await centreTake(first, means, pace);
@@ -119,11 +119,6 @@ export async function inspectSpectra(request: SpectraRequest, pace: Pace): Promi
     nulls,
     findings,
   };
-}
-
-/** The part of the fit in which the wanted signal is known to be absent. */
-function disturbance(take: Take): Interval[] {
-  return intersect(take.fit, take.disturbanceOnly);
 }
 
 const severalSteps: Attainable = {

@@ -3,11 +3,11 @@ import { join } from 'node:path';
 import { afterEach, describe, expect, it } from 'vitest';
 import { newPace, Stopped } from '../../../core/pace';
 import { design } from '../../../core/pipeline/design';
-import type { HostCalls } from '../../../core/protocol/messages';
 import { newNodeHost } from '../../../extension/node/nodeHost';
 import { nodeWorker } from '../../../extension/node/nodeWorker';
 import { WorkerClient } from '../../../extension/workerClient';
 import { project, snapshot } from '../../support/cli';
+import { noHostFiles } from '../../support/noHostFiles';
 import { leftovers, patience, small, smallDocument, smallPairing, withFault } from './smallPairing';
 
 // Work that is given up at any moment: between two blocks, in the worker, and on the command line.
@@ -52,12 +52,6 @@ describe('a design that is given up', { timeout: patience }, () => {
 });
 
 describe('a worker that is stopped', { timeout: patience }, () => {
-  const own: HostCalls = {
-    stat: async () => 'unreadable',
-    read: async () => {
-      throw new Error('local files are read by the worker itself');
-    },
-  };
   let client: WorkerClient | null = null;
   afterEach(() => client?.dispose());
 
@@ -66,7 +60,7 @@ describe('a worker that is stopped', { timeout: patience }, () => {
     const script = join(project, 'dist', 'worker.js');
     const worker = new WorkerClient(
       () => nodeWorker(script),
-      own,
+      noHostFiles,
       () => {},
     );
     client = worker;

@@ -1,12 +1,13 @@
 import { existsSync, readFileSync, renameSync, rmSync, truncateSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { afterEach, describe, expect, it } from 'vitest';
-import type { FromWorker, HostCalls } from '../../../core/protocol/messages';
+import type { FromWorker } from '../../../core/protocol/messages';
 import { unpack } from '../../../core/protocol/pack';
 import type { Views } from '../../../core/protocol/views';
 import { nodeWorker } from '../../../extension/node/nodeWorker';
 import { WorkerClient } from '../../../extension/workerClient';
 import { benchCopy, project, tapwright } from '../../support/cli';
+import { noHostFiles } from '../../support/noHostFiles';
 import { patience, small, smallPairing, smallRecording, withFault } from './smallPairing';
 
 // Recordings that change, shrink or disappear while they are read: real files, changed by another process before one of
@@ -54,12 +55,6 @@ describe('a recording that changes under the command line', { timeout: patience 
 });
 
 describe('a recording that changes under the worker', { timeout: patience }, () => {
-  const own: HostCalls = {
-    stat: async () => 'unreadable',
-    read: async () => {
-      throw new Error('local files are read by the worker itself');
-    },
-  };
   let client: WorkerClient | null = null;
   afterEach(() => client?.dispose());
 
@@ -72,7 +67,7 @@ describe('a recording that changes under the worker', { timeout: patience }, () 
     const script = join(project, 'dist', 'worker.js');
     const worker = new WorkerClient(
       () => nodeWorker(script),
-      own,
+      noHostFiles,
       (why) => deaths.push(why),
     );
     client = worker;

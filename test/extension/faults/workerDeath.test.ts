@@ -1,22 +1,16 @@
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { afterEach, describe, expect, it } from 'vitest';
-import type { HostCalls, ToPage } from '../../../core/protocol/messages';
+import type { ToPage } from '../../../core/protocol/messages';
 import { Session } from '../../../extension/editors/session';
 import { nodeWorker } from '../../../extension/node/nodeWorker';
 import type { WorkerPort } from '../../../extension/platform';
 import { WorkerClient } from '../../../extension/workerClient';
 import { project, snapshot } from '../../support/cli';
+import { noHostFiles } from '../../support/noHostFiles';
 import { patience, small, smallPairing } from './smallPairing';
 
 // The bundled worker in a real thread that runs out of memory or is ended, with the session that a page hears.
-
-const own: HostCalls = {
-  stat: async () => 'unreadable',
-  read: async () => {
-    throw new Error('local files are read by the worker itself');
-  },
-};
 
 let client: WorkerClient | null = null;
 afterEach(() => client?.dispose());
@@ -33,7 +27,7 @@ function newEditor(folder: string, maxOldGenerationSizeMb: number) {
       started.push(port);
       return port;
     },
-    own,
+    noHostFiles,
     (why) => deaths.push(why),
   );
   client = worker;

@@ -1,26 +1,20 @@
 import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { afterEach, describe, expect, it } from 'vitest';
-import type { FromWorker, HostCalls } from '../../../core/protocol/messages';
+import type { FromWorker } from '../../../core/protocol/messages';
 import { nodeWorker } from '../../../extension/node/nodeWorker';
 import { writeFiles } from '../../../extension/node/writeFiles';
 import { WorkerClient } from '../../../extension/workerClient';
 import { benchCopy, emptyFolder, project, tapwright } from '../../support/cli';
+import { noHostFiles } from '../../support/noHostFiles';
 
 // The bundled worker in a thread, over the same port as in a Node host. `npm test` builds it first.
-
-const own: HostCalls = {
-  stat: async () => 'unreadable',
-  read: async () => {
-    throw new Error('local files are read by the worker itself');
-  },
-};
 
 let client: WorkerClient | null = null;
 afterEach(() => client?.dispose());
 
 function newClient(script: string, died: (why: string) => void = () => {}): WorkerClient {
-  client = new WorkerClient(() => nodeWorker(script), own, died);
+  client = new WorkerClient(() => nodeWorker(script), noHostFiles, died);
   return client;
 }
 
